@@ -48,6 +48,8 @@ export type EstimateLimit = z.infer<typeof estimateLimitSchema>;
 export const assumedSchema = z.object({
   /** JSON pointer (RFC 6901) into the assembly document. */
   path: z.string(),
+  /** Every field that takes this same default, `path` first. */
+  paths: z.array(z.string()),
   label: z.string(),
   value: z.union([z.number(), z.string()]),
   /** What it would be if typical rather than cautious. */

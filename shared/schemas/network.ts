@@ -114,6 +114,8 @@ export const limitSchema = z.union(
   [
     z.strictObject({ ...limit, node: idSchema, maxC: temperatureC }),
     z.strictObject({ ...limit, supply: idSchema, maxA: positive(1e5, 'A', 'The current') }),
+    /** Rated current of the device at this node (an array’s own share of a supply). */
+    z.strictObject({ ...limit, node: idSchema, maxA: positive(1e5, 'A', 'The current') }),
     z.strictObject({
       ...limit,
       node: idSchema,
@@ -127,7 +129,7 @@ export const limitSchema = z.union(
         .optional(),
     }),
   ],
-  { error: 'A limit is {node, maxC}, {supply, maxA} or {node, maxW}' },
+  { error: 'A limit is {node, maxC}, {node, maxA}, {node, maxW} or {supply, maxA}' },
 );
 
 export const networkDocumentSchema = z

@@ -29,6 +29,8 @@ export const ruleSetSchema = z
     ),
     /** Off a polymer’s softening temperature, by how the region is loaded. */
     polymerMarginK: z.record(loadStateSchema, sourced(margin)),
+    /** Smallest margin to a wall’s softening limit, which already stands `polymerMarginK` below the softening value. */
+    wallMarginK: sourced(margin),
     /** Smallest margin to a touch limit. */
     touchMarginK: sourced(margin),
     /** Largest surface temperature by surface and contact time. */
