@@ -54,7 +54,7 @@ export const assumedSchema = z.object({
   value: z.union([z.number(), z.string()]),
   /** What it would be if typical rather than cautious. */
   typical: z.union([z.number(), z.string()]),
-  /** Kelvins that the typical value would take off the hottest checked node of the binding limit. */
+  /** Kelvins of margin that the typical value would give the limit that binds. */
   effectK: z.number(),
   source: z.string(),
 });
