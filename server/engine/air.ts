@@ -1,0 +1,139 @@
+/**
+ * Dry air as an ideal gas. SI units, temperatures in kelvin.
+ */
+
+/** Specific gas constant of dry air [J/(kg K)]. */
+export const gasConstant = 287.05;
+
+/** Sutherland’s law: reference value at 273.15 K, and its constant S [K]. */
+const viscosity = { at273: 1.716e-5, s: 110.4 };
+const conductivity = { at273: 0.0241, s: 194 };
+
+/** Range over which these laws are used [K]. */
+export const airRange = { temperature: [150, 1500] } as const;
+
+function sutherland(law: { at273: number; s: number }, t: number): number {
+  return (law.at273 * (t / 273.15) ** 1.5 * (273.15 + law.s)) / (t + law.s);
+}
+
+/** d ln(law)/dT [1/K]. */
+function sutherlandSlope(law: { s: number }, t: number): number {
+  return 1.5 / t - 1 / (t + law.s);
+}
+
+/**
+ * Dynamic viscosity μ [Pa s] at T [K], Sutherland’s law.
+ * **Source** constants of physics handbooks: 1.716·10⁻⁵ Pa s at 273.15 K, S = 110.4 K.
+ */
+export function airViscosity(t: number): number {
+  return sutherland(viscosity, t);
+}
+
+/** Thermal conductivity k [W/(m K)] at T [K], Sutherland’s law with 0.0241 W/(m K) at 273.15 K, S = 194 K. */
+export function airConductivity(t: number): number {
+  return sutherland(conductivity, t);
+}
+
+/** Terms of the ideal-gas heat capacity: constant N₇, and two Planck–Einstein terms (share, temperature [K]). */
+const heatCapacity = {
+  constant: 2.490888032,
+  criticalTemperature: 132.6312,
+  molarGasConstant: 8.31451,
+  molarMass: 0.0289586,
+  power: [0.6057194e-7, -0.210274769e-4, -0.158860716e-3] as const,
+  root: -0.19536342e-3,
+  einstein: [
+    [0.791309509, 25.36365],
+    [0.212236768, 16.90741],
+  ] as const,
+};
+
+/**
+ * Isobaric ideal-gas heat capacity c_p of dry air and its slope.
+ *
+ * c_p/R = 1 − τ² α°_ττ, with τ = 132.6312 K/T.
+ *
+ * @param t temperature T [K]
+ * @returns `value` [J/(kg K)] and `slope` dc_p/dT [J/(kg K²)]
+ *
+ * **Valid for** 60 … 2000 K (the term of dissociation, under 10⁻⁶ below 1500 K, is left out).
+ * **Source** E. W. Lemmon, R. T. Jacobsen, S. G. Penoncello, D. G. Friend, J. Phys. Chem. Ref. Data 29 (2000) 331–385, ideal-gas part;
+ * coefficients from memory.
+ * **Checked against** handbook values at 250 … 500 K within 0.5 %, tests/reference/air-handbook-table.
+ */
+export function airHeatCapacity(t: number): { value: number; slope: number } {
+  const { constant, criticalTemperature, molarGasConstant, molarMass, power, root, einstein } = heatCapacity;
+  const tau = criticalTemperature / t;
+  // τ² α°_ττ and its derivative by τ.
+  let sum = 12 * power[0] * tau ** -3 + 6 * power[1] * tau ** -2 + (2 * power[2]) / tau;
+  let slope = -36 * power[0] * tau ** -4 - 12 * power[1] * tau ** -3 - (2 * power[2]) / tau ** 2;
+  sum += 0.75 * root * tau ** 1.5;
+  slope += 1.125 * root * Math.sqrt(tau);
+  sum -= constant;
+  for (const [share, theta] of einstein) {
+    const u = theta * tau;
+    const e = Math.exp(-u);
+    const term = (share * u * u * e) / (1 - e) ** 2;
+    sum -= term;
+    slope -= term * (2 / tau - (theta * (1 + e)) / (1 - e));
+  }
+  const r = molarGasConstant / molarMass;
+  return { value: r * (1 - sum), slope: r * slope * (tau / t) };
+}
+
+/** Properties of air at one film temperature, with the logarithmic slopes that the derivatives of a film need. */
+export interface FilmAir {
+  /** k [W/(m K)] and d ln k/dT [1/K]. */
+  conductivity: number;
+  conductivitySlope: number;
+  /** Pr and dPr/dT [1/K]. */
+  prandtl: number;
+  prandtlSlope: number;
+  /** g β/(ν α) [1/(m³ K)] and its d ln/dT [1/K]: Ra = this × ΔT × L³. */
+  rayleighFactor: number;
+  rayleighSlope: number;
+  /** ν [m²/s] and d ln ν/dT [1/K]. */
+  kinematicViscosity: number;
+  viscositySlope: number;
+}
+
+/** A blank to be filled by `filmAir`. */
+export function blankFilmAir(): FilmAir {
+  return {
+    conductivity: 0,
+    conductivitySlope: 0,
+    prandtl: 0,
+    prandtlSlope: 0,
+    rayleighFactor: 0,
+    rayleighSlope: 0,
+    kinematicViscosity: 0,
+    viscositySlope: 0,
+  };
+}
+
+/**
+ * All properties at a film temperature, written into `out`.
+ *
+ * ρ = p/(R T), β = 1/T, ν = μ/ρ, α = k/(ρ c_p), Pr = μ c_p/k, so g β/(ν α) = g ρ² c_p/(T μ k).
+ *
+ * @param t film temperature [K]
+ * @param pressure p [Pa]
+ * @param gravity g [m/s²]
+ */
+export function filmAir(t: number, pressure: number, gravity: number, out: FilmAir): void {
+  const mu = sutherland(viscosity, t);
+  const k = sutherland(conductivity, t);
+  const cp = airHeatCapacity(t);
+  const muSlope = sutherlandSlope(viscosity, t);
+  const kSlope = sutherlandSlope(conductivity, t);
+  const cpSlope = cp.slope / cp.value;
+  const rho = pressure / (gasConstant * t);
+  out.conductivity = k;
+  out.conductivitySlope = kSlope;
+  out.prandtl = (mu * cp.value) / k;
+  out.prandtlSlope = out.prandtl * (muSlope + cpSlope - kSlope);
+  out.rayleighFactor = (gravity * rho * rho * cp.value) / (t * mu * k);
+  out.rayleighSlope = -3 / t + cpSlope - muSlope - kSlope;
+  out.kinematicViscosity = mu / rho;
+  out.viscositySlope = muSlope + 1 / t;
+}

@@ -1,0 +1,250 @@
+import type { NetworkDocument, NetworkLink, NetworkSource } from '../../../shared/schemas/network.js';
+import { correlations, findCorrelation } from '../convection/registry.js';
+import { EngineError, type EngineErrorCode, type FieldError } from '../errors.js';
+
+/** Name of a link: its id, or `link-3` by position. */
+export function linkName(link: NetworkLink, index: number): string {
+  return link.id ?? `link-${String(index + 1)}`;
+}
+
+/** True when the link can carry heat at all. */
+export function carriesHeat(link: NetworkLink): boolean {
+  switch (link.kind) {
+    case 'resistance':
+      return true;
+    case 'conduction':
+      return link.areaM2 > 0;
+    case 'film':
+      return link.areaM2 > 0 && link.coefficientWPerM2K > 0;
+    case 'convection':
+      return link.areaM2 > 0 && link.scale > 0;
+    case 'radiation':
+      return (
+        link.areaM2 > 0 &&
+        link.emissivity > 0 &&
+        link.viewFactor !== 0 &&
+        (link.emissivityTo === undefined || (link.emissivityTo > 0 && link.areaToM2 !== 0))
+      );
+  }
+}
+
+class Findings {
+  readonly list: { code: EngineErrorCode; error: FieldError }[] = [];
+
+  add(code: EngineErrorCode, error: FieldError): void {
+    this.list.push({ code, error });
+  }
+}
+
+function checkNodes(document: NetworkDocument, findings: Findings): Set<string> {
+  const ids = new Set<string>();
+  document.nodes.forEach((node, i) => {
+    const path = `/nodes/${String(i)}`;
+    if (ids.has(node.id)) {
+      findings.add('duplicate-id', {
+        path: `${path}/id`,
+        message: `Two nodes have the id “${node.id}”`,
+        node: node.id,
+      });
+    }
+    ids.add(node.id);
+    const heated = (node.heatW ?? 0) !== 0 || node.source !== undefined;
+    if (node.fixedC !== undefined && heated) {
+      findings.add('heat-into-fixed', {
+        path: node.source ? `${path}/source` : `${path}/heatW`,
+        message: `The temperature of “${node.id}” is fixed: heat cannot be put into it`,
+        node: node.id,
+      });
+    }
+  });
+  return ids;
+}
+
+function checkLink(link: NetworkLink, index: number, nodes: ReadonlySet<string>, findings: Findings): void {
+  const path = `/links/${String(index)}`;
+  const name = linkName(link, index);
+  for (const end of ['from', 'to'] as const) {
+    if (!nodes.has(link[end])) {
+      findings.add('unknown-reference', {
+        path: `${path}/${end}`,
+        message: `Link “${name}” names a node “${link[end]}” that is not there`,
+        link: name,
+      });
+    }
+  }
+  if (link.from === link.to) {
+    findings.add('invalid-document', {
+      path: `${path}/to`,
+      message: `Link “${name}” joins a node to itself`,
+      link: name,
+    });
+  }
+  if (link.kind === 'convection' && !findCorrelation(link.shape, link.correlation)) {
+    const known = correlations[link.shape].map(({ id }) => id).join(', ');
+    findings.add('unknown-reference', {
+      path: `${path}/correlation`,
+      message: `There is no correlation “${link.correlation ?? ''}” for ${link.shape}; there are ${known}`,
+      link: name,
+    });
+  }
+  if (link.kind === 'radiation' && link.emissivityTo !== undefined) {
+    const seen = (link.viewFactor ?? 1) * link.areaM2;
+    if (seen > (link.areaToM2 ?? link.areaM2) * (1 + 1e-12)) {
+      findings.add('invalid-document', {
+        path: `${path}/${link.areaToM2 === undefined ? 'viewFactor' : 'areaToM2'}`,
+        message: `Link “${name}”: view factor × area must not exceed the other area (reciprocity)`,
+        link: name,
+      });
+    }
+  }
+}
+
+function checkSource(
+  source: NetworkSource,
+  node: string,
+  path: string,
+  known: { nodes: ReadonlySet<string>; supplies: ReadonlySet<string> },
+  findings: Findings,
+): void {
+  if (source.supply !== undefined && !known.supplies.has(source.supply)) {
+    findings.add('unknown-reference', {
+      path: `${path}/supply`,
+      message: `There is no supply “${source.supply}”`,
+      node,
+    });
+  }
+  if (source.kind === 'converter') {
+    if (source.outputW === undefined && (source.outputV === undefined || source.supply === undefined)) {
+      findings.add('invalid-document', {
+        path: `${path}/outputW`,
+        message: `The converter at “${node}” needs its output power, or an output voltage and a supply`,
+        node,
+      });
+    }
+    return;
+  }
+  if (source.supply === undefined && source.currentA === undefined) {
+    findings.add('invalid-document', {
+      path: `${path}/currentA`,
+      message: `The source at “${node}” needs a current or a supply`,
+      node,
+    });
+  }
+  if (source.kind !== 'led') return;
+  source.light.forEach((light, i) => {
+    if (known.nodes.has(light.node)) return;
+    const message = `The light of “${node}” falls on a node “${light.node}” that is not there`;
+    findings.add('unknown-reference', { path: `${path}/light/${String(i)}/node`, message, node });
+  });
+  const shares = source.light.reduce((sum, light) => sum + light.share, 0);
+  if (shares > 1 + 1e-9) {
+    findings.add('invalid-document', {
+      path: `${path}/light`,
+      message: `The shares of the light of “${node}” exceed 1`,
+      node,
+    });
+  }
+}
+
+function checkLimits(
+  document: NetworkDocument,
+  known: { nodes: ReadonlySet<string>; supplies: ReadonlySet<string> },
+  findings: Findings,
+): void {
+  const ids = new Set<string>();
+  document.limits.forEach((limit, i) => {
+    const path = `/limits/${String(i)}`;
+    if (ids.has(limit.id)) {
+      findings.add('duplicate-id', { path: `${path}/id`, message: `Two limits have the id “${limit.id}”` });
+    }
+    ids.add(limit.id);
+    if ('supply' in limit) {
+      if (known.supplies.has(limit.supply)) return;
+      findings.add('unknown-reference', { path: `${path}/supply`, message: `There is no supply “${limit.supply}”` });
+      return;
+    }
+    const reference = 'maxW' in limit ? limit.derating?.referenceNode : undefined;
+    for (const [key, id] of [
+      ['node', limit.node],
+      ['derating/referenceNode', reference],
+    ] as const) {
+      if (id === undefined || known.nodes.has(id)) continue;
+      findings.add('unknown-reference', { path: `${path}/${key}`, message: `There is no node “${id}”`, node: id });
+    }
+    if ('maxA' in limit || 'maxW' in limit) {
+      const node = document.nodes.find(({ id }) => id === limit.node);
+      if (node && !node.source && !('maxW' in limit && node.heatW !== undefined)) {
+        const message = `There is no device at “${limit.node}” whose rating this could be`;
+        findings.add('invalid-document', { path: `${path}/node`, message, node: limit.node });
+      }
+    }
+  });
+}
+
+/** Nodes from which no chain of links that carry heat leads to a fixed temperature. */
+function withoutPath(document: NetworkDocument): string[] {
+  const parent = new Map<string, string>(document.nodes.map(({ id }) => [id, id]));
+  const root = (id: string): string => {
+    let at = id;
+    while (parent.get(at) !== at) {
+      const up = parent.get(at) as string;
+      parent.set(at, parent.get(up) as string);
+      at = up;
+    }
+    return at;
+  };
+  for (const link of document.links) if (carriesHeat(link)) parent.set(root(link.from), root(link.to));
+  const fixed = new Set(document.nodes.filter(({ fixedC }) => fixedC !== undefined).map(({ id }) => root(id)));
+  return document.nodes.map(({ id }) => id).filter((id) => !fixed.has(root(id)));
+}
+
+/**
+ * Checks what the schema cannot: references, repeats, reciprocity, paths to a fixed temperature.
+ *
+ * @throws EngineError with every finding, each naming its node or link
+ */
+export function validateNetwork(document: NetworkDocument): void {
+  const findings = new Findings();
+  const nodes = checkNodes(document, findings);
+  const supplies = new Set<string>();
+  document.supplies.forEach(({ id }, i) => {
+    if (supplies.has(id)) {
+      findings.add('duplicate-id', { path: `/supplies/${String(i)}/id`, message: `Two supplies have the id “${id}”` });
+    }
+    supplies.add(id);
+  });
+  const links = new Set<string>();
+  document.links.forEach((link, i) => {
+    const name = linkName(link, i);
+    if (links.has(name)) {
+      findings.add('duplicate-id', {
+        path: `/links/${String(i)}/id`,
+        message: `Two links have the id “${name}”`,
+        link: name,
+      });
+    }
+    links.add(name);
+    checkLink(link, i, nodes, findings);
+  });
+  document.nodes.forEach((node, i) => {
+    if (node.source) checkSource(node.source, node.id, `/nodes/${String(i)}/source`, { nodes, supplies }, findings);
+  });
+  checkLimits(document, { nodes, supplies }, findings);
+  if (findings.list.length === 0) {
+    for (const id of withoutPath(document)) {
+      const i = document.nodes.findIndex((node) => node.id === id);
+      findings.add('no-path-to-fixed', {
+        path: `/nodes/${String(i)}`,
+        message: `From “${id}” no heat can flow to a fixed temperature`,
+        node: id,
+      });
+    }
+  }
+  const first = findings.list[0];
+  if (first)
+    throw new EngineError(
+      first.code,
+      first.error.message,
+      findings.list.map(({ error }) => error),
+    );
+}
