@@ -5,7 +5,7 @@ import type { UnitConverter } from './quantities.js';
  * The one place for conversions between units, built on mathjs. Load it on demand (`import('…/units.js')`): it is too
  * large for a page’s first load. Converts points only: a temperature *difference* stays in K.
  */
-const math = create({ unitDependencies }, {});
+const math = create(unitDependencies ?? {}, {});
 
 /** Converts a value between two units in plain signs (`degC`, `W/m^2`). */
 export const convertUnit: UnitConverter = (value, from, to) => {
