@@ -2,25 +2,8 @@ import type { CeilingAnswer, Drive } from '../../../shared/schemas/network-answe
 import type { NetworkDocument, NetworkLimit } from '../../../shared/schemas/network.js';
 import type { LimitInfo } from '../assembly/builder.js';
 import type { WallBand } from '../conduction/printed-wall.js';
+import { withSecondCorrelations } from '../network/solve.js';
 import { findCeiling } from './ceiling.js';
-
-/** The second published correlation of each shape. */
-const secondCorrelation = {
-  'vertical-plate': 'churchill-chu',
-  'plate-facing-up': 'lloyd-moran',
-  'plate-facing-down': 'mcadams',
-} as const;
-
-/** The same network by the second correlation of each shape. */
-export function withSecondCorrelations(document: NetworkDocument): NetworkDocument {
-  return {
-    ...document,
-    links: document.links.map((link) => {
-      if (link.kind !== 'convection' || !(link.shape in secondCorrelation)) return link;
-      return { ...link, correlation: secondCorrelation[link.shape as keyof typeof secondCorrelation] };
-    }),
-  };
-}
 
 function guardLimit(limit: NetworkLimit, asked: number): NetworkLimit {
   if ('maxC' in limit) return { ...limit, maxC: limit.maxC - asked };
@@ -57,7 +40,9 @@ export function guardedCeiling(
 ): CeilingAnswer {
   const candidates = networks.flatMap((network) => {
     const guarded = withAskedMargins(network, limits);
-    return [guarded, withSecondCorrelations(guarded)].map((document) => findCeiling(document, drive));
+    return [guarded, withSecondCorrelations(guarded)].map((document) =>
+      findCeiling(document, drive, { onlyBinding: true }),
+    );
   });
   return candidates.reduce((least, ceiling) => (comparableScale(ceiling) < comparableScale(least) ? ceiling : least));
 }

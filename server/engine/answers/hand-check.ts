@@ -22,7 +22,7 @@ export function handCheck(
   if (areaM2 === 0) {
     return { text: 'No face is open to the room: there is no hand check.', riseK: 0, networkRiseK: 0 };
   }
-  const heatW = answer.heatBalance.inW;
+  const heatW = answer.heatBalance.inW - answer.heatBalance.lightOutW;
   const riseK = heatW / (handFilm * areaM2);
   const meanC =
     open.reduce(

@@ -2,7 +2,7 @@ import { faceNames, type FaceName } from '../../../shared/schemas/assembly.js';
 import { printedWallConductivity, type WallBand } from '../conduction/printed-wall.js';
 import type { NetworkBuilder } from './builder.js';
 import { edges, faceSize, innerSize, outsideFacing, turned, verticalExtent } from './geometry.js';
-import { atTemperature } from './inline-values.js';
+import { lookUp } from '../tables.js';
 import { wallReferenceC } from './resolve-housing.js';
 import type { ResolvedAssembly, ResolvedFace } from './resolved.js';
 import { convectionLink, type Surface } from './surfaces.js';
@@ -26,7 +26,7 @@ export function faceLabel(face: FaceName): string {
 
 export function wallConductivity(face: ResolvedFace, band: WallBand): { through: number; inPlane: number } {
   if (face.printed) return printedWallConductivity(face.printed, band);
-  const along = atTemperature(face.material.conductivityWPerMK.value, wallReferenceC);
+  const along = lookUp(face.material.conductivityWPerMK.value, wallReferenceC);
   return { through: along, inPlane: along };
 }
 

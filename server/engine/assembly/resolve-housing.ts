@@ -10,7 +10,8 @@ import type { PrintedWall } from '../conduction/printed-wall.js';
 import type { Assumptions } from './assumptions.js';
 import { defaults, typicalPolymer, unknownPolymer } from './defaults.js';
 import { opposite } from './geometry.js';
-import { atTemperature, contentOf } from './inline-values.js';
+import { lookUp } from '../tables.js';
+import { contentOf } from './inline-values.js';
 import type { ResolvedFace } from './resolved.js';
 
 /** Temperature at which walls’ conductivities are taken [°C]. */
@@ -53,9 +54,9 @@ function resolvePrint(
 ): PrintedWall {
   const fill = <K extends 'perimeters' | 'lineWidthM' | 'layerHeightM' | 'closedLayers' | 'infillShare'>(key: K) =>
     assumptions.fill<number>(print[key], `${path}/${key}`, key, defaults[key]);
-  const along = atTemperature(material.conductivityWPerMK.value, wallReferenceC);
+  const along = lookUp(material.conductivityWPerMK.value, wallReferenceC);
   const through = material.conductivityThroughLayersWPerMK
-    ? atTemperature(material.conductivityThroughLayersWPerMK.value, wallReferenceC)
+    ? lookUp(material.conductivityThroughLayersWPerMK.value, wallReferenceC)
     : along;
   const pattern = assumptions.fill<string>(print.pattern, `${path}/pattern`, 'pattern', defaults.pattern);
   const common = {

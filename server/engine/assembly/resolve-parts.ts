@@ -5,7 +5,8 @@ import { stackSpecificResistance } from '../conduction/contact.js';
 import type { FieldError } from '../errors.js';
 import type { Assumptions } from './assumptions.js';
 import { defaults } from './defaults.js';
-import { atTemperature, contentOf } from './inline-values.js';
+import { lookUp } from '../tables.js';
+import { contentOf } from './inline-values.js';
 import { isPolymer, resolveEmissivity, wallReferenceC } from './resolve-housing.js';
 import type { ResolvedCarrier, ResolvedFace, ResolvedPart } from './resolved.js';
 
@@ -28,7 +29,7 @@ function resolveJoint(stack: Stack, path: string, onPrint: boolean, assumptions:
           'bondLineM',
           defaults.bondLineM,
         ),
-        conductivity: atTemperature(material.conductivityWPerMK.value, wallReferenceC),
+        conductivity: lookUp(material.conductivityWPerMK.value, wallReferenceC),
         specificResistance: material.contactResistanceKM2PerW?.value ?? 0,
         contactShare: layer.contactShare,
       };
@@ -47,7 +48,7 @@ export function resolveCarriers(
     const area = carrier.sizeM[0] * carrier.sizeM[1];
     if (carrier.kind === 'plate') {
       const material = contentOf(carrier.material, `${path}/material`);
-      const k = atTemperature(material.conductivityWPerMK.value, wallReferenceC);
+      const k = lookUp(material.conductivityWPerMK.value, wallReferenceC);
       const onPrint = isPolymer(faces[carrier.on.face].material);
       return {
         ...common,
@@ -68,7 +69,7 @@ export function resolveCarriers(
     }));
     const board = boardConductivity(
       layers.map((layer) => ({
-        conductivity: atTemperature(layer.material.conductivityWPerMK.value, wallReferenceC),
+        conductivity: lookUp(layer.material.conductivityWPerMK.value, wallReferenceC),
         thickness: layer.thickness,
         coverage: layer.coverage,
       })),

@@ -1,0 +1,81 @@
+import type { SolveAnswer } from '../../../shared/schemas/network-answers.js';
+import type { NetworkDocument } from '../../../shared/schemas/network.js';
+import { secondCorrelation } from '../convection/registry.js';
+import { EngineError } from '../errors.js';
+import { networkAnswer, temperaturesC } from './answer.js';
+import { firstGuess, solveSteady } from './newton.js';
+import { PreparedNetwork } from './prepared.js';
+
+/** The same network by the second correlation of each shape. */
+export function withSecondCorrelations(document: NetworkDocument): NetworkDocument {
+  return {
+    ...document,
+    links: document.links.map((link) => {
+      const second = link.kind === 'convection' ? secondCorrelation(link.shape) : undefined;
+      return second ? { ...link, correlation: second.id } : link;
+    }),
+  };
+}
+
+/** Sets every drive of the network to a share of what its document says. */
+function scaleAll(network: PreparedNetwork, share: number): void {
+  const { document } = network;
+  document.supplies.forEach(({ currentA }, i) => (network.supplyCurrents[i] = currentA * share));
+  document.nodes.forEach(({ heatW, source }, i) => {
+    network.givenHeat[i] = (heatW ?? 0) * share;
+    if (source && source.kind !== 'converter') network.ownCurrents[i] = (source.currentA ?? 0) * share;
+  });
+}
+
+/** The largest share of the present drives at which there still is a steady state, to a part in a thousand. */
+function highestShare(network: PreparedNetwork): number {
+  let holds = 0;
+  let fails = 1;
+  for (let step = 0; step < 12; step++) {
+    const share = (holds + fails) / 2;
+    scaleAll(network, share);
+    firstGuess(network);
+    try {
+      solveSteady(network);
+      holds = share;
+    } catch (error) {
+      if (!(error instanceof EngineError)) throw error;
+      fails = share;
+    }
+  }
+  return holds;
+}
+
+/**
+ * The steady state of a network document.
+ *
+ * @param options `compare`: the whole solution once more with each shape’s second correlation
+ * @returns temperatures [°C], flows [W], film coefficients [W/(m² K)], devices, limits, heat balance and warnings
+ * @throws EngineError naming the node or link: invalid document, no path to a fixed temperature, runaway, not converged
+ */
+export function solveNetwork(document: NetworkDocument, options: { compare?: boolean } = {}): SolveAnswer {
+  const network = new PreparedNetwork(document);
+  firstGuess(network);
+  let answer: SolveAnswer;
+  try {
+    answer = networkAnswer(network, solveSteady(network));
+  } catch (error) {
+    if (error instanceof EngineError && error.code === 'runaway') throw withHighestDrive(error, network);
+    throw error;
+  }
+  if (!options.compare) return answer;
+  const second = new PreparedNetwork(withSecondCorrelations(document));
+  second.temperatures.set(network.temperatures);
+  solveSteady(second);
+  return { ...answer, compared: { temperaturesC: temperaturesC(second) } };
+}
+
+function withHighestDrive(error: EngineError, network: PreparedNetwork): EngineError {
+  const share = highestShare(network);
+  const message = `${error.message}; it has one up to ${(100 * share).toFixed(1)} % of it`;
+  return new EngineError(
+    'runaway',
+    message,
+    error.errors.map((entry) => ({ ...entry, message })),
+  );
+}
