@@ -131,7 +131,7 @@ describe('What moves an estimate, in the right sense', () => {
       const { network } = estimateAssembly(lamp({ housing: { ...lampInput.housing, pose: { up } } }), rules);
       return solveNetwork(network).filmCoefficientsWPerM2K['face.top.outside.convection'] ?? NaN;
     };
-    expect(film('bottom')).toBeLessThan(0.7 * film('top'));
+    expect(film('bottom')).toBeLessThan(0.8 * film('top'));
   });
 });
 
