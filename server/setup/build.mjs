@@ -1,0 +1,45 @@
+import { createHash } from 'node:crypto';
+import { existsSync, mkdirSync, readFileSync, readdirSync, statSync, writeFileSync } from 'node:fs';
+import path from 'node:path';
+import { SetupError } from './fail.mjs';
+import { root } from './paths.mjs';
+import { run } from './run.mjs';
+
+const builds = {
+  client: {
+    inputs: ['src', 'shared', 'index.html', 'vite.config.ts', 'package-lock.json'],
+    command: ['npx', ['--no-install', 'vite', 'build', '--logLevel', 'warn']],
+    output: 'dist/client/index.html',
+  },
+  server: {
+    inputs: ['server', 'shared', 'tsconfig.json', 'tsconfig.build.json', 'package-lock.json'],
+    command: ['npx', ['--no-install', 'tsc', '-p', 'tsconfig.build.json']],
+    output: 'dist/server/main.js',
+  },
+};
+
+function addFile(hash, file) {
+  if (statSync(file).isDirectory()) {
+    for (const name of readdirSync(file).sort()) addFile(hash, path.join(file, name));
+    return;
+  }
+  hash.update(path.relative(root, file)).update('\0').update(readFileSync(file)).update('\0');
+}
+
+/** Builds the client and the server where their inputs have changed since the last build. */
+export async function ensureBuilt(which = ['server', 'client']) {
+  for (const name of which) {
+    const { inputs, command, output } = builds[name];
+    const hash = createHash('sha256');
+    for (const input of inputs) addFile(hash, path.join(root, input));
+    const digest = hash.digest('hex');
+    const stamp = path.join(root, 'dist', `.${name}-inputs`);
+    const fresh = existsSync(stamp) && readFileSync(stamp, 'utf8') === digest && existsSync(path.join(root, output));
+    if (fresh) continue;
+    console.log(`Building the ${name} …`);
+    const result = await run(command[0], command[1], { quiet: true });
+    if (result.code !== 0) throw new SetupError(`The ${name} could not be built:\n${result.output.trim()}`);
+    mkdirSync(path.dirname(stamp), { recursive: true });
+    writeFileSync(stamp, digest);
+  }
+}
