@@ -29,6 +29,7 @@ interface Context {
 /**
  * Joins a source of the given contact area to the inside of a face: joint, hottest spot, spreading in the wall. The wall
  * conducts differently through and along itself: stretching its thickness by √(k∥/k⊥) makes it isotropic with √(k∥ k⊥).
+ * `even`: the source is a plate that evens out its own temperature, so that its mean speaks for all of it.
  */
 function joinToFace(
   context: Context,
@@ -38,6 +39,7 @@ function joinToFace(
   face: FaceName,
   areaM2: number,
   jointKM2PerW: number,
+  even: boolean,
 ) {
   const { builder, models } = context;
   const model = models[face];
@@ -53,7 +55,7 @@ function joinToFace(
   builder.node(peak, 'spot', `${faceLabel(face)}, inside, under ${label}`);
   builder.node(hotSpot, 'spot', `${faceLabel(face)}, outside, over ${label}`);
   builder.resistance(`${id}.joint`, from, peak, jointKM2PerW / areaM2);
-  builder.resistance(`${id}.spreading`, peak, `face.${face}.inner`, spreading.peak);
+  builder.resistance(`${id}.spreading`, peak, `face.${face}.inner`, even ? spreading.mean : spreading.peak);
   const share = Math.min(Math.max(spreading.farSideShare, 1e-6), 1 - 1e-6);
   builder.resistance(`${id}.reading.inner`, peak, hotSpot, readingKPerW * (1 - share));
   builder.resistance(`${id}.reading.outer`, hotSpot, `face.${face}.outer`, readingKPerW * share);
@@ -82,7 +84,7 @@ function compileCarrier(context: Context, carrier: ResolvedCarrier, partsAreaM2:
   });
   if (carrier.kind === 'plate') {
     covered[carrier.face] += areaM2;
-    joinToFace(context, node, carrier.id, `plate ${carrier.id}`, carrier.face, areaM2, carrier.jointKM2PerW);
+    joinToFace(context, node, carrier.id, `plate ${carrier.id}`, carrier.face, areaM2, carrier.jointKM2PerW, true);
     return;
   }
   if (carrier.standOffM > stillGapM) {
@@ -211,7 +213,7 @@ function compilePart(context: Context, part: ResolvedPart): void {
   );
   if (!carrier) {
     covered[face] += areaM2;
-    joinToFace(context, body, part.id, part.label, face, areaM2, part.jointKM2PerW);
+    joinToFace(context, body, part.id, part.label, face, areaM2, part.jointKM2PerW, false);
     return;
   }
   const spreading = spreadingLeeSongAuMoran({

@@ -32,6 +32,9 @@ export interface SpreadingAnswer {
  * peak Ψ = ετ/√π + (1 − ε) Φ/√π, mean Ψ = ετ/√π + ½ (1 − ε)^1.5 Φ; R = Ψ/(√π k a).
  * The term ετ/√π is the plate’s one-dimensional resistance; it is left out here, the network carries it.
  *
+ * Neither passes what it would be if no heat spread at all, (t/k + 1/h)(1/A_s − 1/A): the formula would for a large source on a
+ * thin poor conductor.
+ *
  * The share on the far side is that of the single mode λ through the plate: 1/(cosh λτ + (Bi/λ) sinh λτ).
  *
  * @returns resistances [K/W] beyond the one-dimensional one
@@ -52,9 +55,12 @@ export function spreadingLeeSongAuMoran(input: SpreadingInput): SpreadingAnswer 
   const tanh = Math.tanh(lambda * tau);
   const phi = (tanh + lambda / biot) / (1 + (lambda / biot) * tanh);
   const perRadius = 1 / (Math.sqrt(Math.PI) * input.conductivity * a);
+  const withoutSpreading =
+    (input.thickness / input.conductivity + 1 / input.filmCoefficient) *
+    Math.max(1 / input.sourceArea - 1 / input.plateArea, 0);
   return {
-    peak: perRadius * ((1 - epsilon) / Math.sqrt(Math.PI)) * phi,
-    mean: perRadius * 0.5 * (1 - epsilon) ** 1.5 * phi,
+    peak: Math.min(perRadius * ((1 - epsilon) / Math.sqrt(Math.PI)) * phi, withoutSpreading),
+    mean: Math.min(perRadius * 0.5 * (1 - epsilon) ** 1.5 * phi, withoutSpreading),
     farSideShare: 1 / (Math.cosh(lambda * tau) + (biot / lambda) * Math.sinh(lambda * tau)),
   };
 }

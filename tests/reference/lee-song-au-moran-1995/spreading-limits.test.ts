@@ -41,6 +41,13 @@ describe('The closed form of Lee, Song, Au and Moran', () => {
     expect(plate.mean).toBe(0);
   });
 
+  it('never passes the answer without any spreading: a plate on most of a thin printed lid', () => {
+    const lid = { sourceArea: 0.0096, plateArea: 0.0139, thickness: 0.0024, conductivity: 0.2, filmCoefficient: 10 };
+    const bound = (0.0024 / 0.2 + 1 / 10) * (1 / 0.0096 - 1 / 0.0139);
+    expect(spreadingLeeSongAuMoran(lid).peak).toBeLessThanOrEqual(bound);
+    expect(spreadingLeeSongAuMoran(lid).mean).toBeLessThanOrEqual(bound);
+  });
+
   it('has its peak above its mean, and both fall as the plate conducts better', () => {
     const at = (conductivity: number) =>
       spreadingLeeSongAuMoran({
