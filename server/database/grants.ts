@@ -1,0 +1,27 @@
+import type { DataSource } from 'typeorm';
+
+/** Tables whose rows are never changed or removed by the application. */
+const insertOnly = [
+  'decision_events',
+  'revisions',
+  'revision_contributors',
+  'reference_values',
+  'reference_value_versions',
+  'audit_entries',
+];
+
+function quoted(name: string): string {
+  return `"${name.replaceAll('"', '""')}"`;
+}
+
+/** Gives the application’s role what it needs and no more. Does nothing where owner and application are one. */
+export async function grantToApplication(dataSource: DataSource, applicationRole: string): Promise<void> {
+  const [{ current_user: owner }] = await dataSource.query<[{ current_user: string }]>('SELECT current_user');
+  if (owner === applicationRole) return;
+  const role = quoted(applicationRole);
+  await dataSource.query(`GRANT USAGE ON SCHEMA public TO ${role}`);
+  await dataSource.query(`GRANT SELECT, INSERT, UPDATE, DELETE ON ALL TABLES IN SCHEMA public TO ${role}`);
+  await dataSource.query(`REVOKE UPDATE, DELETE ON ${insertOnly.join(', ')} FROM ${role}`);
+  await dataSource.query(`REVOKE INSERT ON reference_values, reference_value_versions FROM ${role}`);
+  await dataSource.query(`REVOKE INSERT, UPDATE, DELETE ON migrations FROM ${role}`);
+}

@@ -1,0 +1,54 @@
+import { z } from 'zod';
+import { assemblyDocumentSchema } from '../../shared/schemas/assembly.js';
+import { compileAnswerSchema, estimateRequestSchema, estimateSchema } from '../../shared/schemas/estimate.js';
+import { networkDocumentSchema } from '../../shared/schemas/network.js';
+import { ceilingAnswerSchema, ceilingRequestSchema, solveAnswerSchema } from '../../shared/schemas/network-answers.js';
+import { compileDocument, estimateDocument } from '../services/computing.js';
+import { defineRoute } from './define.js';
+
+const tag = 'Computing';
+
+export const computingRoutes = [
+  defineRoute({
+    method: 'post',
+    path: '/networks/solve',
+    tag,
+    summary: 'Steady state of a network document',
+    access: 'read',
+    query: z.object({ compare: z.enum(['true', 'false']).default('false') }),
+    body: networkDocumentSchema,
+    answers: { status: 200, schema: solveAnswerSchema },
+    handle: ({ context, input }) =>
+      context.workers.run('solve', { document: input.body, compare: input.query.compare === 'true' }),
+  }),
+  defineRoute({
+    method: 'post',
+    path: '/networks/ceiling',
+    tag,
+    summary: 'Largest drive at which every limit of a network holds',
+    access: 'read',
+    body: ceilingRequestSchema,
+    answers: { status: 200, schema: ceilingAnswerSchema },
+    handle: ({ context, input }) => context.workers.run('ceiling', input.body),
+  }),
+  defineRoute({
+    method: 'post',
+    path: '/estimates',
+    tag,
+    summary: 'Temperatures, margins and ceilings of an assembly document; saves nothing',
+    access: 'read',
+    body: estimateRequestSchema,
+    answers: { status: 200, schema: estimateSchema },
+    handle: ({ context, input }) => estimateDocument(context, input.body),
+  }),
+  defineRoute({
+    method: 'post',
+    path: '/assemblies/compile',
+    tag,
+    summary: 'The network document of an assembly, per scenario',
+    access: 'read',
+    body: assemblyDocumentSchema,
+    answers: { status: 200, schema: compileAnswerSchema },
+    handle: ({ context, input }) => compileDocument(context, input.body),
+  }),
+];
