@@ -3,7 +3,7 @@ import { assemblyDocumentSchema } from '../../shared/schemas/assembly.js';
 import { compileAnswerSchema, estimateRequestSchema, estimateSchema } from '../../shared/schemas/estimate.js';
 import { networkDocumentSchema } from '../../shared/schemas/network.js';
 import { ceilingAnswerSchema, ceilingRequestSchema, solveAnswerSchema } from '../../shared/schemas/network-answers.js';
-import { compileDocument, estimateDocument } from '../services/computing.js';
+import { compileDocument, estimateDocument, networkCeiling } from '../services/computing.js';
 import { defineRoute } from './define.js';
 
 const tag = 'Computing';
@@ -29,7 +29,7 @@ export const computingRoutes = [
     access: 'read',
     body: ceilingRequestSchema,
     answers: { status: 200, schema: ceilingAnswerSchema },
-    handle: ({ context, input }) => context.workers.run('ceiling', input.body),
+    handle: ({ context, input }) => networkCeiling(context, input.body),
   }),
   defineRoute({
     method: 'post',

@@ -1,6 +1,8 @@
 import type { AssemblyDocument } from '../../shared/schemas/assembly.js';
 import type { Estimate, EstimateRequest } from '../../shared/schemas/estimate.js';
+import type { CeilingAnswer, CeilingRequest } from '../../shared/schemas/network-answers.js';
 import type { AppContext } from '../context.js';
+import { DomainError } from '../errors.js';
 import type { EngineTasks } from '../workers/engine-tasks.js';
 import { findRuleSet, inlineDocument } from './values.js';
 
@@ -11,18 +13,12 @@ export async function estimateDocument(context: AppContext, request: EstimateReq
   try {
     return await context.workers.run('estimate', { document, rules, scenario: request.scenario }, '/assembly');
   } catch (error) {
-    throw withScenarioPath(error);
-  }
-}
-
-/** The scenario stands beside the assembly in the request, not inside it. */
-function withScenarioPath(error: unknown): unknown {
-  if (error instanceof Error && 'errors' in error && Array.isArray(error.errors)) {
-    for (const entry of error.errors as { path: string }[]) {
-      if (entry.path === '/assembly/scenario') entry.path = '/scenario';
+    if (error instanceof DomainError) {
+      // The scenario stands beside the assembly in the request, not inside it.
+      for (const entry of error.errors) if (entry.path === '/assembly/scenario') entry.path = '/scenario';
     }
+    throw error;
   }
-  return error;
 }
 
 /** The networks of a document, one per scenario. */
@@ -33,4 +29,16 @@ export async function compileDocument(
   const rules = await findRuleSet(context);
   const document = await inlineDocument(context, assembly);
   return context.workers.run('compile', { document, rules });
+}
+
+/** The drive ceiling of a network document. The drive stands beside the document in the request. */
+export async function networkCeiling(context: AppContext, request: CeilingRequest): Promise<CeilingAnswer> {
+  try {
+    return await context.workers.run('ceiling', request);
+  } catch (error) {
+    if (error instanceof DomainError) {
+      for (const entry of error.errors) if (!entry.path.startsWith('/drive')) entry.path = `/document${entry.path}`;
+    }
+    throw error;
+  }
 }

@@ -1,0 +1,62 @@
+import { ConfigError, readConfig, type Config } from './config.js';
+import type { AppContext } from './context.js';
+import { makeDataSource } from './database/data-source.js';
+import { grantToApplication } from './database/grants.js';
+import { loadDemoTeams } from './database/seeds-demo.js';
+import { loadReferenceValues } from './database/seeds-reference.js';
+import { Workers } from './workers/pool.js';
+
+/** Brings a database up to date: migrations, grants, reference values, and where they are wanted the demo teams. */
+export async function migrate(config: Config): Promise<void> {
+  const owner = makeDataSource(config.ownerUrl);
+  await owner.initialize();
+  try {
+    await owner.runMigrations({ transaction: 'all' });
+    await grantToApplication(owner, decodeURIComponent(new URL(config.databaseUrl).username));
+    await loadReferenceValues(owner);
+  } finally {
+    await owner.destroy();
+  }
+  if (!config.demo) return;
+  const dataSource = makeDataSource(config.databaseUrl);
+  await dataSource.initialize();
+  const context: AppContext = {
+    config,
+    dataSource,
+    workers: new Workers(),
+    background: new Set(),
+    now: () => new Date(),
+  };
+  try {
+    await loadDemoTeams(context);
+    await Promise.all(context.background);
+  } finally {
+    await context.workers.close();
+    await dataSource.destroy();
+  }
+}
+
+/** True when this file is what Node was started with. */
+const isMain = process.argv[1] !== undefined && /migrate\.(js|ts)$/.test(process.argv[1]);
+
+if (isMain) {
+  try {
+    await migrate(readConfig(process.env));
+  } catch (error) {
+    const unreachable =
+      error instanceof Error &&
+      /ECONNREFUSED|ENOTFOUND|ETIMEDOUT|password authentication/.test(
+        `${error.message}${String((error as { code?: unknown }).code)}`,
+      );
+    const message =
+      error instanceof Error ? error.message || String((error as { code?: unknown }).code) : String(error);
+    const plain =
+      error instanceof ConfigError
+        ? message
+        : unreachable
+          ? `The database cannot be reached: ${message}`
+          : (error as Error).stack;
+    process.stderr.write(`trimwick: ${plain ?? message}\n`);
+    process.exitCode = 1;
+  }
+}

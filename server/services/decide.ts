@@ -1,0 +1,162 @@
+import type { EntityManager } from 'typeorm';
+import type { z } from 'zod';
+import type { Decision, decideSchema, withdrawSchema } from '../../shared/schemas/decision.js';
+import { may } from '../../shared/roles.js';
+import type { Actor, AppContext } from '../context.js';
+import { conflict, forbidden, invalid, notFound } from '../errors.js';
+import { mayDecide } from '../policies/independence.js';
+import { addEvent, lockTeamRecord } from './decisionEvents.js';
+import { contributorIds, getDecision } from './decisionReading.js';
+import { confirmPassword } from './sessions.js';
+
+type Decide = z.infer<typeof decideSchema>;
+
+interface LockedDecision {
+  version: number;
+  state: string;
+  assembly_id: string;
+  revision_id: string;
+  asked_by: string;
+  decided_by_name: string | null;
+}
+
+async function lock(manager: EntityManager, actor: Actor, id: string): Promise<LockedDecision> {
+  await lockTeamRecord(manager, actor.teamId);
+  const [row] = await manager.query<LockedDecision[]>(
+    `SELECT d.version, d.state, d.assembly_id, d.revision_id, d.asked_by, u.name AS decided_by_name
+     FROM decisions d LEFT JOIN users u ON u.id = d.decided_by
+     WHERE d.team_id = $1 AND d.id = $2 FOR UPDATE OF d`,
+    [actor.teamId, id],
+  );
+  if (!row) throw notFound('decision');
+  return row;
+}
+
+/** Tells the one who came second what has happened meanwhile. */
+function refuseStale(row: LockedDecision, expectedVersion: number): void {
+  if (row.state === 'asked' && row.version === expectedVersion) return;
+  const who = row.decided_by_name === null ? '' : ` by ${row.decided_by_name}`;
+  const message =
+    row.state === 'asked'
+      ? 'This request was asked anew meanwhile: read it again'
+      : `This decision is ${row.state.replaceAll('-', ' ')} already${who}`;
+  throw conflict('decided-meanwhile', message, { state: row.state, version: row.version });
+}
+
+function refuseOpenFlags(decision: Decision, input: Decide): void {
+  const taken = new Set(input.flagsTaken.map(({ id }) => id));
+  const open = decision.redFlags.filter(({ id }) => !taken.has(id));
+  if (open.length === 0) return;
+  throw invalid(
+    open.map(({ id, words }) => ({
+      path: `/flagsTaken/${id.replaceAll('~', '~0').replaceAll('/', '~1')}`,
+      message: `Tick and give a reason: ${words}`,
+    })),
+    'Every red flag must be ticked with a reason before this can be accepted',
+  );
+}
+
+/** An accepted revision takes the place of the assembly’s earlier accepted ones. */
+async function supersedeEarlier(
+  manager: EntityManager,
+  actor: Actor,
+  id: string,
+  assemblyId: string,
+  at: Date,
+): Promise<void> {
+  const earlier = await manager.query<{ id: string }[]>(
+    `SELECT id FROM decisions WHERE team_id = $1 AND assembly_id = $2 AND id <> $3
+       AND state IN ('accepted', 'accepted-with-conditions') ORDER BY number`,
+    [actor.teamId, assemblyId, id],
+  );
+  for (const old of earlier) {
+    await manager.query(
+      `UPDATE decisions SET state = 'superseded', version = version + 1 WHERE team_id = $1 AND id = $2`,
+      [actor.teamId, old.id],
+    );
+    await addEvent(manager, {
+      teamId: actor.teamId,
+      decisionId: old.id,
+      kind: 'superseded',
+      actorId: actor.userId,
+      at,
+      reason: 'A newer revision was accepted',
+    });
+  }
+}
+
+/**
+ * Records a reviewer’s outcome. Accepting needs every red flag ticked and the password again.
+ *
+ * @throws DomainError 403 where the reviewer is not independent, 409 where somebody was faster, 422 beside the field
+ */
+export async function decide(context: AppContext, actor: Actor, id: string, input: Decide): Promise<Decision> {
+  const decision = await getDecision(context, actor, id);
+  const accepts = input.outcome === 'accepted' || input.outcome === 'accepted-with-conditions';
+  const contributors = await context.dataSource.query<{ revision_id: string }[]>(
+    'SELECT revision_id FROM decisions WHERE team_id = $1 AND id = $2',
+    [actor.teamId, id],
+  );
+  const facts = {
+    state: 'asked',
+    askedBy: decision.askedBy.id,
+    contributorIds: await contributorIds(context, actor.teamId, contributors[0]?.revision_id ?? ''),
+  };
+  const allowed = mayDecide(actor, facts);
+  if (!allowed.may) throw forbidden(allowed.why, 'not-independent');
+  if (accepts) {
+    refuseOpenFlags(decision, input);
+    await confirmPassword(context, actor, input.password ?? '', '/password');
+  }
+  const at = context.now();
+  await context.dataSource.transaction(async (manager) => {
+    const row = await lock(manager, actor, id);
+    refuseStale(row, input.expectedVersion);
+    await manager.query(
+      `UPDATE decisions SET state = $3, version = version + 1, decided_by = $4, decided_at = $5 WHERE team_id = $1 AND id = $2`,
+      [actor.teamId, id, input.outcome, actor.userId, at],
+    );
+    await addEvent(manager, {
+      teamId: actor.teamId,
+      decisionId: id,
+      kind: input.outcome,
+      actorId: actor.userId,
+      at,
+      reason: input.reason,
+      conditions: input.conditions,
+      flagsTaken: input.flagsTaken,
+    });
+    if (accepts) await supersedeEarlier(manager, actor, id, row.assembly_id, at);
+  });
+  return getDecision(context, actor, id);
+}
+
+/** Takes a waiting request back: its asker or an administrator. */
+export async function withdraw(
+  context: AppContext,
+  actor: Actor,
+  id: string,
+  input: z.infer<typeof withdrawSchema>,
+): Promise<Decision> {
+  const at = context.now();
+  await context.dataSource.transaction(async (manager) => {
+    const row = await lock(manager, actor, id);
+    if (row.asked_by !== actor.userId && !may(actor.roles, 'administer')) {
+      throw forbidden('Only who asked, or an administrator, may withdraw this', 'role-missing');
+    }
+    refuseStale(row, input.expectedVersion);
+    await manager.query(
+      `UPDATE decisions SET state = 'withdrawn', version = version + 1 WHERE team_id = $1 AND id = $2`,
+      [actor.teamId, id],
+    );
+    await addEvent(manager, {
+      teamId: actor.teamId,
+      decisionId: id,
+      kind: 'withdrawn',
+      actorId: actor.userId,
+      at,
+      reason: input.reason,
+    });
+  });
+  return getDecision(context, actor, id);
+}
