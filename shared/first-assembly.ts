@@ -175,7 +175,7 @@ function carrierSize(housing: Housing): [number, number] {
 function carriersOf(seat: Seat, housing: Housing, { materials }: Catalogue): Carrier[] {
   const sizeM = carrierSize(housing);
   if (seat === 'plate-top' || seat === 'plate-bottom') {
-    const aluminium = find(materials, /alumin/i);
+    const aluminium = find(materials, /^aluminium-606/) ?? find(materials, /alumin/i);
     if (aluminium === null) return [];
     return [
       {
@@ -272,7 +272,7 @@ export function firstAssembly(
   const fed = type !== undefined && electrical !== 'heat';
   const part: Part = {
     id: 'part-1',
-    name: type?.content.name ?? 'Heat',
+    name: type?.content.name ?? 'Heat source',
     type: type ? { version: type.version } : { inline: plainHeat },
     mount: { on: mountOn(seat, carriers), stack: null },
     supply: fed ? 'drive' : null,

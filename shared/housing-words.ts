@@ -74,8 +74,10 @@ function findMaterial<M extends NamedMaterial>(words: readonly string[], materia
     const hits = words.filter(
       (word) => word.length > 1 && known.some((k) => k === word || (word.length > 4 && k.startsWith(word))),
     );
-    // Several hits beat one; of equal ones the shorter name is the plainer material.
-    const score = hits.reduce((sum, word) => sum + word.length, 0) - known.length / 100;
+    // Several hits beat one; of equal ones the row named by that word alone, then the shorter name, the plainer material.
+    const exact = hits.includes(material.slug) ? 0.5 : 0;
+    const unasked = known.includes('pure') && !words.includes('pure') ? 1 : 0;
+    const score = hits.reduce((sum, word) => sum + word.length, 0) + exact - unasked - known.length / 100;
     if (hits.length > 0 && (best === null || score > best.score)) best = { material, score };
   }
   return best?.material ?? null;
@@ -105,6 +107,7 @@ export function readWallWords<M extends NamedMaterial>(text: string, materials: 
     .toLowerCase()
     .replace(/[\u00a0\u2009\u202f]/g, ' ')
     .replace(/(\d),(?=\d)/g, '$1.')
+    .replace(/aluminum/g, 'aluminium')
     .replace(new RegExp(`\\b(${numberWords.join('|')})\\b`, 'g'), (word) => String(numberWords.indexOf(word)));
 
   const take = (...patterns: string[]): number | null => {

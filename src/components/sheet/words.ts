@@ -1,0 +1,45 @@
+import type { FaceName } from '../../../shared/schemas/assembly.js';
+import type { Choice } from './ChoiceField.vue';
+
+/** The words of the sheet’s choices. */
+
+export const faceChoices: Choice[] = (['top', 'bottom', 'front', 'back', 'left', 'right'] satisfies FaceName[]).map(
+  (face) => ({ value: face, label: face }),
+);
+
+export const loadChoices: Choice[] = [
+  { value: 'free', label: 'free: carries nothing' },
+  { value: 'self-weight', label: 'its own weight' },
+  { value: 'snap', label: 'snap fit' },
+  { value: 'screw-clamped', label: 'clamped by screws' },
+  { value: 'structural', label: 'structural: carries the product' },
+];
+
+export const touchChoices: Choice[] = [
+  { value: 'no', label: 'out of reach' },
+  { value: '1 s', label: 'brushed, up to 1 s' },
+  { value: '10 s', label: 'handled, up to 10 s' },
+  { value: '1 min', label: 'held, up to 1 min' },
+  { value: '10 min', label: 'held, up to 10 min' },
+  { value: '8 h', label: 'carried or worn, up to 8 h' },
+];
+
+export const exposureChoices: Choice[] = [
+  { value: 'open', label: 'open to the room' },
+  { value: 'against-wall', label: 'held flat against something that takes no heat' },
+];
+
+export const patternChoices: Choice[] = [
+  { value: 'cells', label: 'cells' },
+  { value: 'ribs', label: 'ribs from wall to wall' },
+];
+
+export const arrangementChoices: Choice[] = [
+  { value: 'parallel', label: 'in parallel' },
+  { value: 'series', label: 'in series' },
+];
+
+export const sunChoices: Choice[] = [
+  { value: 'worst', label: 'the face that takes up most' },
+  ...faceChoices.map(({ value, label }) => ({ value, label: `the ${label} face` })),
+];
