@@ -6,7 +6,7 @@ export type SaveState = 'saved' | 'changed' | 'saving' | 'unreachable' | 'confli
 export type SaveOutcome<C> =
   | { kind: 'saved'; version: number; at: string }
   | { kind: 'conflict'; conflict: C }
-  | { kind: 'unreachable' }
+  | { kind: 'unreachable'; message: string }
   | { kind: 'refused'; message: string };
 
 interface Options<D, C> {
@@ -32,6 +32,7 @@ export function useAutosave<D, C>(options: Options<D, C>) {
   const state = ref<SaveState>('saved');
   const savedAt = ref<string | null>(null);
   const conflict = shallowRef<C | null>(null);
+  /** Why the last attempt did not go. */
   const refusal = ref('');
   /** False when not even the browser could keep it. */
   const keptHere = ref(true);
@@ -80,6 +81,7 @@ export function useAutosave<D, C>(options: Options<D, C>) {
     waiting = newest ?? sending;
     if (outcome.kind === 'unreachable') {
       state.value = 'unreachable';
+      refusal.value = outcome.message;
       schedule(retryMs);
       retryMs = Math.min(retryMs * 2, longestRetryMs);
     } else if (outcome.kind === 'conflict') {

@@ -70,9 +70,9 @@ describe('autosave', () => {
 
   test('tries again, ever more seldom, until the server is back; then sends the newest', async () => {
     const { autosave, sent, dropped } = setUp([
-      { kind: 'unreachable' },
-      { kind: 'unreachable' },
-      { kind: 'unreachable' },
+      { kind: 'unreachable', message: 'no connection' },
+      { kind: 'unreachable', message: 'no connection' },
+      { kind: 'unreachable', message: 'no connection' },
     ]);
     autosave.change('a');
     await vi.advanceTimersByTimeAsync(600);
@@ -91,7 +91,7 @@ describe('autosave', () => {
   });
 
   test('tries at once when the browser comes online', async () => {
-    const { autosave, sent } = setUp([{ kind: 'unreachable' }]);
+    const { autosave, sent } = setUp([{ kind: 'unreachable', message: 'no connection' }]);
     autosave.change('a');
     await vi.advanceTimersByTimeAsync(600);
     globalThis.dispatchEvent(new Event('online'));
