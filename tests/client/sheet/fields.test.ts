@@ -70,6 +70,18 @@ describe('a quantity field', () => {
     expect(wrapper.get('[role=alert]').text()).toBe('The wall thickness must be at least 0.1 mm');
   });
 
+  test('a field for several values that differ changes none of them by itself', async () => {
+    const wrapper = mount(QuantityField, {
+      props: { kind: 'length', label: 'Wall', modelValue: '', mixed: true, unknown: true },
+    });
+    await useUnits().load();
+    await flushPromises();
+    await wrapper.get('input').trigger('focus');
+    await wrapper.get('input').trigger('blur');
+    expect(wrapper.emitted('update:modelValue')).toBeUndefined();
+    expect(wrapper.get('input').attributes('placeholder')).toBe('differs');
+  });
+
   test('typing is not disturbed by the value that comes back', async () => {
     const wrapper = field({ modelValue: 0.001 });
     const input = wrapper.get('input');
