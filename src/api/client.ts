@@ -76,7 +76,8 @@ export async function request<T>(
     // A proxy’s page instead of ours.
     problem = plainProblem(response.status);
   }
-  if (response.status === 401 && problem.code === 'not-signed-in') for (const listener of signedOutListeners) listener();
+  if (response.status === 401 && problem.code === 'not-signed-in')
+    for (const listener of signedOutListeners) listener();
   throw new ApiError(response.status, problem as Problem & Record<string, unknown>);
 }
 

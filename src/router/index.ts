@@ -70,7 +70,12 @@ const routes: RouteRecordRaw[] = [
         meta: { title: 'Decision' },
       },
       { path: 'team', name: 'team', component: () => import('../views/TeamView.vue'), meta: { title: 'Team' } },
-      { path: 'account', name: 'account', component: () => import('../views/AccountView.vue'), meta: { title: 'Account' } },
+      {
+        path: 'account',
+        name: 'account',
+        component: () => import('../views/AccountView.vue'),
+        meta: { title: 'Account' },
+      },
       { path: 'guide', name: 'guide', component: () => import('../views/GuideView.vue'), meta: { title: 'Guide' } },
       {
         path: ':path(.*)*',

@@ -71,7 +71,9 @@ export function valueText(value: unknown): string {
   if (typeof value === 'number') return String(value).replace('-', '−');
   if (!Array.isArray(value)) return String(value);
   if (value.every((entry) => typeof entry === 'number')) return value.map((entry) => valueText(entry)).join(' × ');
-  return value.map((entry) => (Array.isArray(entry) ? entry.map((part) => valueText(part)).join(' → ') : valueText(entry))).join('; ');
+  return value
+    .map((entry) => (Array.isArray(entry) ? entry.map((part) => valueText(part)).join(' → ') : valueText(entry)))
+    .join('; ');
 }
 
 function labelOf(key: string, around: Record<string, unknown>): [string, string] {
