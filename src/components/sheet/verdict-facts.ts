@@ -13,10 +13,10 @@ export function worstScenario(scenarios: readonly ScenarioVerdict[]): ScenarioVe
   })[0];
 }
 
-/** “3.1 K”, “0.12 A”, “12 % of the allowed power”. */
+/** “3.1 K”, “0.12 A”, “12 % free” of the allowed power. */
 export function marginText(margin: number, unit: Verdict['marginUnit'] | EstimateLimit['unit']): string {
   if (unit === '°C' || unit === 'K') return `${kelvins(margin)}\u00a0K`;
-  if (unit === '1') return `${figures(margin * 100)}\u00a0% of what is allowed`;
+  if (unit === '1') return `${figures(margin * 100)}\u00a0% free`;
   return `${figures(margin)}\u00a0${unit}`;
 }
 

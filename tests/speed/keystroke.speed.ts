@@ -1,0 +1,72 @@
+import { cpus } from 'node:os';
+import { chromium, type Page } from 'playwright-core';
+
+/**
+ * Sheet keystroke → painted verdict strip, in a real browser against a running server with the demo team.
+ * `TRIMWICK_URL` names it (http://127.0.0.1:4310 is what `npm start` serves).
+ */
+const base = process.env.TRIMWICK_URL ?? 'http://127.0.0.1:4310';
+const executablePath = process.env.CHROMIUM_PATH ?? '/usr/bin/chromium';
+const keystrokes = 60;
+const demo = { email: 'designer@brackenmoor.example', password: 'trim-the-wick-4310' };
+
+declare global {
+  var strokeTimes: number[];
+}
+
+/** Notes, for every key pressed in the field, the time until the frame after the strip’s words have changed. */
+async function watchStrip(page: Page): Promise<void> {
+  await page.evaluate(() => {
+    globalThis.strokeTimes = [];
+    let pressedAt = 0;
+    document.addEventListener('keydown', () => (pressedAt = performance.now()), { capture: true });
+    const strip = document.querySelector('[data-testid=verdict]');
+    if (!strip) throw new Error('no verdict strip');
+    new MutationObserver(() => {
+      const from = pressedAt;
+      if (from === 0) return;
+      pressedAt = 0;
+      requestAnimationFrame(() => setTimeout(() => globalThis.strokeTimes.push(performance.now() - from)));
+    }).observe(strip, { characterData: true, childList: true, subtree: true });
+  });
+}
+
+async function measure(page: Page): Promise<number[]> {
+  const list = await page.request.get(`${base}/api/v1/assemblies?search=lantern`);
+  const { items } = (await list.json()) as { items: { id: string }[] };
+  const [lantern] = items;
+  if (!lantern) throw new Error('The demo lantern is not there');
+  await page.goto(`${base}/assemblies/${lantern.id}`);
+  await page.waitForSelector('[data-testid=verdict]');
+  await page.locator('#section-scenarios .sheet-link').last().click();
+  const air = page.getByRole('dialog').getByLabel('Air', { exact: true });
+  await air.fill('30');
+  await page.waitForTimeout(1000);
+  await watchStrip(page);
+  await air.press('End');
+  for (let i = 0; i < keystrokes / 2; i += 1) {
+    for (const key of ['Backspace', String(1 + (i % 9))]) {
+      const before = await page.evaluate(() => globalThis.strokeTimes.length);
+      await page.keyboard.press(key);
+      await page.waitForFunction((count) => globalThis.strokeTimes.length > count, before, { timeout: 10_000 });
+    }
+  }
+  return page.evaluate(() => globalThis.strokeTimes);
+}
+
+const browser = await chromium.launch({ executablePath, args: ['--no-sandbox', '--disable-gpu'] });
+try {
+  const page = await browser.newPage({ viewport: { width: 1440, height: 1000 } });
+  const signedIn = await page.request.post(`${base}/api/v1/session`, { data: demo });
+  if (!signedIn.ok())
+    throw new Error(`Sign-in answered ${String(signedIn.status())}: is the demo team loaded at ${base}?`);
+  // What is typed here must not stay in the demo: the draft is never saved.
+  await page.route('**/draft', (route) => route.abort());
+  const times = (await measure(page)).sort((a, b) => a - b);
+  const at = (share: number) => (times[Math.min(Math.floor(times.length * share), times.length - 1)] ?? NaN).toFixed(0);
+  console.log(
+    `keystroke → painted strip: median ${at(0.5)} ms, p95 ${at(0.95)} ms, worst ${at(1)} ms (${String(times.length)} keystrokes; ${cpus()[0]?.model ?? 'unknown processor'})`,
+  );
+} finally {
+  await browser.close();
+}
