@@ -272,7 +272,7 @@ export function firstAssembly(
   const fed = type !== undefined && electrical !== 'heat';
   const part: Part = {
     id: 'part-1',
-    name: type?.content.name ?? 'Heat source',
+    name: type?.content.name.split(',')[0] ?? 'Heat source',
     type: type ? { version: type.version } : { inline: plainHeat },
     mount: { on: mountOn(seat, carriers), stack: null },
     supply: fed ? 'drive' : null,
