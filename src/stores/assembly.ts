@@ -1,6 +1,6 @@
 import { defineStore } from 'pinia';
 import { computed, ref, shallowRef } from 'vue';
-import { formatNumber, formatQuantity, type QuantityKind } from '../../shared/quantities.js';
+import { formatQuantity, type QuantityKind } from '../../shared/quantities.js';
 import { may } from '../../shared/roles.js';
 import type { AssemblyDocumentInput } from '../../shared/schemas/assembly.js';
 import type { Assembly } from '../../shared/schemas/assembly-records.js';
@@ -15,6 +15,7 @@ import {
 } from '../api/sheet.js';
 import { completeDraft } from '../composables/complete-draft.js';
 import { differences, valueAt as valueIn, withValueAt } from '../composables/document-path.js';
+import { numberInWords } from '../composables/document-values.js';
 import { dropCopy, findCopy, keepCopy, livingTabs, tabId } from '../composables/draft-copies.js';
 import { kelvins } from '../composables/numbers.js';
 import { useAutosave } from '../composables/useAutosave.js';
@@ -198,8 +199,7 @@ export const useAssemblyStore = defineStore('assembly', () => {
     if (!entry) return undefined;
     const say = (value: number | string) => {
       if (typeof value === 'string') return value;
-      if (kind !== undefined) return formatQuantity(value, kind);
-      return entry.path.endsWith('/stack') ? `${formatNumber(value * 1e4)}\u00a0K\u00a0cm²/W` : formatNumber(value);
+      return kind === undefined ? numberInWords(value, entry.path) : formatQuantity(value, kind);
     };
     const effect =
       Math.abs(entry.effectK) < 0.05
@@ -229,6 +229,7 @@ export const useAssemblyStore = defineStore('assembly', () => {
     keptHere: autosave.keptHere,
     refusal: autosave.refusal,
     conflict: autosave.conflict,
+    conflictIsOwn: computed(() => autosave.conflict.value?.updatedBy.id === userId.value),
     draftVersion: autosave.version,
     flush: autosave.flush,
     open,

@@ -72,8 +72,8 @@ test('two people on one draft: both versions are shown, and either can be chosen
   const conflict = page.getByRole('alertdialog', { name: /Somebody else saved this draft meanwhile/ });
   await conflict.waitFor();
   const rows = await conflict.getByRole('row').allTextContents();
-  expect(rows.some((row) => /Depth.*0\.09.*0\.1/.test(row))).toBe(true);
-  expect(rows.some((row) => /Height.*0\.06/.test(row))).toBe(true);
+  expect(rows.some((row) => /Depth.*90\u00a0mm.*100\u00a0mm/.test(row))).toBe(true);
+  expect(rows.some((row) => /Height.*60\u00a0mm/.test(row))).toBe(true);
   await conflict
     .getByRole('button', { name: /Keep mine/, exact: false })
     .first()

@@ -1,3 +1,4 @@
+import { AxeBuilder } from '@axe-core/playwright';
 import { afterAll, beforeAll, beforeEach, describe, expect, test } from 'vitest';
 import { openAs, type Person } from './harness/people.js';
 import { draftOnServer, makeLantern, saved, verdictHolds } from './sheet-helpers.js';
@@ -19,7 +20,7 @@ beforeEach(async () => {
 
 describe('typing on the sheet', () => {
   test.each([
-    ['12 mm', 0.012, '12 mm'],
+    ['3.5 mm', 0.0035, '3.5 mm'],
     ['1/4 in', 0.00635, '6.35 mm'],
     ['0,3 cm', 0.003, '3 mm'],
     ['2.4e-3 m', 0.0024, '2.4 mm'],
@@ -106,7 +107,10 @@ describe('typing on the sheet', () => {
 describe('by keyboard alone', () => {
   test('a face, its wall, a part’s drawer and a working are reached and left without a pointer', async () => {
     const { page } = designer;
-    await page.getByRole('button', { name: /^left face/ }).focus();
+    await page
+      .locator('#section-housing')
+      .getByRole('button', { name: /^left face/ })
+      .focus();
     await page.keyboard.press('Enter');
     await page.getByRole('group', { name: 'The left face' }).waitFor();
     const part = page.locator('#section-parts').getByRole('button', { name: 'LED array', exact: true });
@@ -152,6 +156,32 @@ describe('on a phone', () => {
     expect(top).toBeLessThan(400);
     await page.setViewportSize({ width: 1440, height: 1000 });
   });
+});
+
+describe('for everybody', () => {
+  test.each(['light', 'dark'] as const)(
+    'the sheet and its drawers have no accessibility violation, %s',
+    async (colorScheme) => {
+      const { page } = designer;
+      await page.emulateMedia({ colorScheme });
+      const openers = [
+        null,
+        page.locator('#section-parts').getByRole('button', { name: 'LED array', exact: true }),
+        page.locator('#section-parts').getByRole('button', { name: 'plate', exact: true }),
+        page.locator('#section-scenarios').getByRole('button', { name: 'Worst room', exact: true }),
+        page.locator('#section-temperatures .limits').getByRole('button').first(),
+        page.getByRole('button', { name: /assumed value/ }),
+      ];
+      for (const opener of openers) {
+        await opener?.click();
+        const { violations } = await new AxeBuilder({ page }).analyze();
+        expect(
+          violations.map(({ id, nodes }) => `${id}: ${nodes.map(({ target }) => target.join(' ')).join(', ')}`),
+        ).toEqual([]);
+      }
+      await page.emulateMedia({ colorScheme: 'light' });
+    },
+  );
 });
 
 test('a viewer reads the sheet and can change nothing', async () => {

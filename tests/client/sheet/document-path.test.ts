@@ -7,6 +7,7 @@ import {
   valueAt,
   withValueAt,
 } from '../../../src/composables/document-path.js';
+import { numberInWords } from '../../../src/composables/document-values.js';
 import { fieldName } from '../../../src/composables/field-names.js';
 
 const document = {
@@ -57,4 +58,20 @@ describe('a document by pointer', () => {
   ])('%s is called “%s”', (pointer, name) => {
     expect(fieldName(pointer, document)).toBe(name);
   });
+});
+
+test.each([
+  [0.0024, '/housing/faces/top/wallM', '2.4\u00a0mm'],
+  [0.09, '/housing/outerM/1', '90\u00a0mm'],
+  [0.05, '/carriers/0/sizeM/0', '50\u00a0mm'],
+  [40, '/scenarios/0/airC', '40\u00a0°C'],
+  [1800, '/scenarios/0/altitudeM', '1800\u00a0m'],
+  [1000, '/scenarios/0/sun/irradianceWPerM2', '1000\u00a0W/m²'],
+  [0.2, '/housing/faces/top/print/infillShare', '20\u00a0%'],
+  [0.15, '/supplies/0/currentA', '0.15\u00a0A'],
+  [10, '/parts/0/heatW', '10\u00a0W'],
+  [0.0001, '/parts/0/mount/stack', '1\u00a0K\u00a0cm²/W'],
+  [3, '/housing/faces/top/print/perimeters', '3'],
+])('%d at %s reads “%s”', (value, pointer, words) => {
+  expect(numberInWords(value, pointer)).toBe(words);
 });
