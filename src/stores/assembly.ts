@@ -57,7 +57,7 @@ export const useAssemblyStore = defineStore('assembly', () => {
   });
 
   function draftOf(typed: AssemblyDocumentInput): Draft {
-    return { assemblyId: record.value?.id ?? '', document: typed as unknown as Draft['document'] };
+    return { assemblyId: record.value?.id ?? '', document: { ...typed } };
   }
 
   const { estimate, failure, pending, slow, isOld, retry } = useEstimate({

@@ -2,7 +2,7 @@ import { defineStore } from 'pinia';
 import { computed, ref, shallowRef } from 'vue';
 import type { FinishVersion, MaterialVersion, PartTypeVersion } from '../../shared/schemas/reference-lists.js';
 import { fetchFinishes, fetchMaterials, fetchPartTypes } from '../api/sheet.js';
-import type { Choice } from '../components/sheet/ChoiceField.vue';
+import type { Choice } from '../components/sheet/choice.js';
 
 export type CatalogueKind = 'material' | 'finish' | 'part';
 
@@ -81,6 +81,12 @@ export const useCatalogueStore = defineStore('catalogue', () => {
     return rows.value[kind].find((row) => row.version === version)?.name ?? 'an earlier version';
   }
 
+  /** Name of a version of any kind; `undefined` where none of the newest has it. */
+  function nameOfVersion(version: string): string | undefined {
+    const all = [...rows.value.material, ...rows.value.finish, ...rows.value.part];
+    return all.find((row) => row.version === version)?.name;
+  }
+
   function partType(reference: unknown): PartTypeVersion['content'] | undefined {
     if (typeof reference !== 'object' || reference === null) return undefined;
     if ('inline' in reference) return reference.inline as PartTypeVersion['content'];
@@ -88,5 +94,5 @@ export const useCatalogueStore = defineStore('catalogue', () => {
     return partTypes.value.find((row) => row.version === version)?.content;
   }
 
-  return { materials, finishes, partTypes, state, load, choices, nameOf, partType };
+  return { materials, finishes, partTypes, state, load, choices, nameOf, nameOfVersion, partType };
 });

@@ -5,19 +5,17 @@ import type { Page } from 'playwright-core';
 
 /** Waits until the sheet says that everything is saved. */
 export async function saved(page: Page): Promise<void> {
-  await page.waitForFunction(() => {
-    const note = document.querySelector('[data-testid=save-note]');
-    return note !== null && /^saved/.test(note.textContent ?? '');
-  });
+  await page
+    .getByTestId('save-note')
+    .filter({ hasText: /^saved/ })
+    .waitFor();
 }
 
 /** The verdict strip’s words, once they hold what is expected. */
 export async function verdictHolds(page: Page, words: RegExp): Promise<string> {
-  await page.waitForFunction(
-    (source) => new RegExp(source).test(document.querySelector('[data-testid=verdict]')?.textContent ?? ''),
-    words.source,
-  );
-  return (await page.getByTestId('verdict').textContent()) ?? '';
+  const strip = page.getByTestId('verdict').filter({ hasText: words });
+  await strip.waitFor();
+  return (await strip.textContent()) ?? '';
 }
 
 /** Makes an assembly from the eight questions and opens its sheet; returns its address. */

@@ -29,14 +29,7 @@ describe('typing on the sheet', () => {
     const wall = page.getByLabel('Wall', { exact: true });
     await wall.fill(text);
     await wall.blur();
-    await page.waitForFunction(
-      ([label, wanted]) => {
-        const field = [...document.querySelectorAll('label')].find((entry) => entry.textContent === label);
-        const input = field && document.getElementById(field.htmlFor);
-        return input instanceof HTMLInputElement && input.value === wanted;
-      },
-      ['Wall', shown] as const,
-    );
+    await expect.poll(() => wall.inputValue()).toBe(shown);
     await saved(page);
     const { document } = await draftOnServer(page, address);
     expect(document).toMatchObject({ housing: { faces: { top: { wallM: value }, left: { wallM: value } } } });
@@ -53,7 +46,7 @@ describe('typing on the sheet', () => {
     await page.reload();
     await page.getByText('“sixteen fingers” is not a number').waitFor();
     await page.getByRole('button', { name: /^Width:/ }).click();
-    expect(await page.evaluate(() => document.activeElement?.getAttribute('aria-invalid'))).toBe('true');
+    expect(await page.locator(':focus').getAttribute('aria-invalid')).toBe('true');
     await width.fill('160 mm');
     await verdictHolds(page, /Worst room/);
     await saved(page);
@@ -117,10 +110,10 @@ describe('by keyboard alone', () => {
     await part.focus();
     await page.keyboard.press('Enter');
     await page.getByRole('dialog').waitFor();
-    expect(await page.evaluate(() => document.activeElement?.tagName)).toBe('H2');
+    expect(await page.locator('h2:focus').textContent()).toBe('Part: LED array');
     await page.keyboard.press('Escape');
     await page.getByRole('dialog').waitFor({ state: 'detached' });
-    expect(await page.evaluate(() => document.activeElement?.textContent?.trim())).toBe('LED array');
+    expect((await page.locator(':focus').textContent())?.trim()).toBe('LED array');
     await page.locator('#section-temperatures .step').first().focus();
     await page.keyboard.press('Enter');
     await page.getByRole('dialog', { name: /^Working/ }).waitFor();
@@ -128,32 +121,34 @@ describe('by keyboard alone', () => {
   });
 });
 
+/** Width of the page, and the smallest type in its pictures as drawn; runs in the page. */
+const measurePage = `(() => {
+  const texts = [...document.querySelectorAll('svg text')].filter((text) => text.getClientRects().length > 0);
+  const drawn = (text) => {
+    const svg = text.closest('svg');
+    const scale = svg.getBoundingClientRect().width / (svg.viewBox.baseVal.width || 1);
+    return parseFloat(getComputedStyle(text).fontSize) * scale;
+  };
+  return {
+    page: document.documentElement.scrollWidth,
+    smallest: Math.min(...texts.map(drawn)),
+    count: texts.length,
+  };
+})()`;
+
 describe('on a phone', () => {
   test('nothing runs out of the page, and no text in a picture is below 11 px', async () => {
     const { page } = designer;
     await page.setViewportSize({ width: 390, height: 844 });
     await page.reload();
     await page.waitForSelector('[data-testid=verdict]');
-    const sizes = await page.evaluate(() => {
-      const texts = [...document.querySelectorAll('svg text')].filter((text) => text.getClientRects().length > 0);
-      return {
-        page: document.documentElement.scrollWidth,
-        smallest: Math.min(
-          ...texts.map((text) => {
-            const svg = text.closest('svg');
-            const scale = svg ? svg.getBoundingClientRect().width / (svg.viewBox.baseVal.width || 1) : 1;
-            return Number.parseFloat(getComputedStyle(text).fontSize) * scale;
-          }),
-        ),
-        count: texts.length,
-      };
-    });
+    const sizes = await page.evaluate<{ page: number; smallest: number; count: number }>(measurePage);
     expect(sizes.page).toBeLessThanOrEqual(390);
     expect(sizes.count).toBeGreaterThan(20);
     expect(sizes.smallest).toBeGreaterThanOrEqual(11);
     await page.getByLabel('Go to section').selectOption({ label: '5 Drive ceiling' });
-    const top = await page.locator('#section-ceiling').evaluate((section) => section.getBoundingClientRect().top);
-    expect(top).toBeLessThan(400);
+    const box = await page.locator('#section-ceiling').boundingBox();
+    expect(box?.y).toBeLessThan(400);
     await page.setViewportSize({ width: 1440, height: 1000 });
   });
 });

@@ -10,26 +10,18 @@ const executablePath = process.env.CHROMIUM_PATH ?? '/usr/bin/chromium';
 const keystrokes = 60;
 const demo = { email: 'designer@brackenmoor.example', password: 'trim-the-wick-4310' };
 
-declare global {
-  var strokeTimes: number[];
-}
-
-/** Notes, for every key pressed in the field, the time until the frame after the strip’s words have changed. */
-async function watchStrip(page: Page): Promise<void> {
-  await page.evaluate(() => {
-    globalThis.strokeTimes = [];
-    let pressedAt = 0;
-    document.addEventListener('keydown', () => (pressedAt = performance.now()), { capture: true });
-    const strip = document.querySelector('[data-testid=verdict]');
-    if (!strip) throw new Error('no verdict strip');
-    new MutationObserver(() => {
-      const from = pressedAt;
-      if (from === 0) return;
-      pressedAt = 0;
-      requestAnimationFrame(() => setTimeout(() => globalThis.strokeTimes.push(performance.now() - from)));
-    }).observe(strip, { characterData: true, childList: true, subtree: true });
-  });
-}
+/** Notes, for every key pressed, the time until the frame after the strip’s words have changed; runs in the page. */
+const watchStrip = `(() => {
+  globalThis.strokeTimes = [];
+  let pressedAt = 0;
+  document.addEventListener('keydown', () => { pressedAt = performance.now(); }, { capture: true });
+  new MutationObserver(() => {
+    const from = pressedAt;
+    if (from === 0) return;
+    pressedAt = 0;
+    requestAnimationFrame(() => setTimeout(() => globalThis.strokeTimes.push(performance.now() - from)));
+  }).observe(document.querySelector('[data-testid=verdict]'), { characterData: true, childList: true, subtree: true });
+})()`;
 
 async function measure(page: Page): Promise<number[]> {
   const list = await page.request.get(`${base}/api/v1/assemblies?search=lantern`);
@@ -42,16 +34,16 @@ async function measure(page: Page): Promise<number[]> {
   const air = page.getByRole('dialog').getByLabel('Air', { exact: true });
   await air.fill('30');
   await page.waitForTimeout(1000);
-  await watchStrip(page);
+  await page.evaluate(watchStrip);
   await air.press('End');
   for (let i = 0; i < keystrokes / 2; i += 1) {
     for (const key of ['Backspace', String(1 + (i % 9))]) {
-      const before = await page.evaluate(() => globalThis.strokeTimes.length);
+      const before = await page.evaluate<number>('strokeTimes.length');
       await page.keyboard.press(key);
-      await page.waitForFunction((count) => globalThis.strokeTimes.length > count, before, { timeout: 10_000 });
+      await page.waitForFunction(`strokeTimes.length > ${String(before)}`, undefined, { timeout: 10_000 });
     }
   }
-  return page.evaluate(() => globalThis.strokeTimes);
+  return page.evaluate<number[]>('strokeTimes');
 }
 
 const browser = await chromium.launch({ executablePath, args: ['--no-sandbox', '--disable-gpu'] });

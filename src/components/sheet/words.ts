@@ -1,5 +1,5 @@
 import type { FaceName } from '../../../shared/schemas/assembly.js';
-import type { Choice } from './ChoiceField.vue';
+import type { Choice } from './choice.js';
 
 /** The words of the sheet’s choices. */
 
