@@ -1,5 +1,5 @@
 import { defineStore } from 'pinia';
-import { computed, ref, shallowRef } from 'vue';
+import { computed, ref, shallowRef, watch } from 'vue';
 import { formatQuantity, type QuantityKind } from '../../shared/quantities.js';
 import { may } from '../../shared/roles.js';
 import type { AssemblyDocumentInput } from '../../shared/schemas/assembly.js';
@@ -66,6 +66,16 @@ export const useAssemblyStore = defineStore('assembly', () => {
     request: requestEstimate,
     explain: explainError,
   });
+
+  // Signed in again in the middle of work: go on where it stopped.
+  watch(
+    () => session.session !== null,
+    (signedIn) => {
+      if (!signedIn || document.value === null) return;
+      void autosave.flush();
+      retry();
+    },
+  );
 
   function take(loaded: Assembly): void {
     record.value = loaded;

@@ -106,6 +106,21 @@ test('two tabs of one person on one draft do not overwrite each other unseen', a
   await second.close();
 });
 
+test('a session that ends in the middle of work asks for the password in place, and loses nothing', async () => {
+  const { page, base } = designer;
+  await page.locator('#section-record').getByLabel('What is asked').fill('half a statement');
+  await page.request.delete(`${base}/api/v1/session`);
+  await page.getByLabel('Height, outside').fill('59');
+  await page.getByText('Your session has ended').waitFor();
+  await page.getByLabel('Password').fill(designer.password);
+  await page.keyboard.press('Enter');
+  await page.getByText('Your session has ended').waitFor({ state: 'detached' });
+  await saved(page);
+  expect(await draftOnServer(page, address)).toMatchObject({ document: { housing: { outerM: [0.16, 0.11, 0.059] } } });
+  expect(await page.locator('#section-record').getByLabel('What is asked').inputValue()).toBe('half a statement');
+  await verdictHolds(page, /Worst room/);
+});
+
 test('pressing “keep it” twice makes one assembly', async () => {
   const { page, base } = designer;
   const name = `Double press ${String(Date.now())}`;
