@@ -23,8 +23,8 @@ export async function makeLantern(page: Page, base: string, name: string): Promi
   await page.goto(`${base}/assemblies/new`);
   await page.waitForSelector('[data-testid=verdict]');
   await page.getByLabel('Its name').fill(name);
-  await page.getByLabel('Width × depth × height, outside').fill('16 × 9 × 4,5 cm');
-  await page.getByLabel('In your words').fill('PETG, 3 walls, 20 % infill');
+  await page.getByLabel('Width × depth × height, outside', { exact: true }).fill('16 × 9 × 4,5 cm');
+  await page.getByLabel('In your words', { exact: true }).fill('PETG, 3 walls, 20 % infill');
   await page.getByLabel('Part', { exact: true }).selectOption({ label: 'LED array, 10 W class, 30 to 36 V, white' });
   await page.getByLabel('Current through it', { exact: true }).fill('50 mA');
   await page.getByLabel('The housing').selectOption({ label: 'hangs free, air all round' });

@@ -13,6 +13,8 @@ export interface Stair {
   x: number;
   w: number;
   y: number;
+  /** Where the step’s value stands: above the step, or below it when its limit lies close above. */
+  valueY: number;
   limitY: number | null;
   limitTextY: number | null;
   dropText: string;
@@ -73,6 +75,7 @@ export function staircase(path: Path, width: number, height: number) {
       x: left + i * w,
       w,
       y,
+      valueY: limitY !== null && limitY <= y && y - limitY < 20 ? y + 15 : y - 6,
       limitY,
       limitTextY: limitY === null ? null : clashes || limitY < top ? limitY - 5 : limitY > y ? limitY + 14 : limitY - 5,
       dropText: !narrow && nextY - y > 40 ? `${kelvins(drop)} K` : '',

@@ -1,6 +1,6 @@
 import type { Estimate } from '../../../shared/schemas/estimate.js';
 import type { NetworkLink } from '../../../shared/schemas/network.js';
-import { figures, kelvins } from '../../composables/numbers.js';
+import { figures } from '../../composables/numbers.js';
 
 /** The heat balance of one node, link by link, with the law that each link follows. */
 
@@ -45,7 +45,7 @@ function conductivityText(k: number | [number, number][]): string {
 }
 
 function describe(link: NetworkLink, flowW: number, rise: number): Pick<WorkingRow, 'law' | 'formula' | 'inputs'> {
-  const dT = { name: 'ΔT', value: `${kelvins(rise)} K` };
+  const dT = { name: 'ΔT', value: `${figures(rise)} K` };
   switch (link.kind) {
     case 'resistance':
       return {
