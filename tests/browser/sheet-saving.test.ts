@@ -1,5 +1,5 @@
 import { afterAll, beforeAll, expect, test } from 'vitest';
-import { openAs, type Person } from './harness/people.js';
+import { openAs, type Person } from './people.js';
 import { draftOnServer, makeLantern, saved, verdictHolds } from './sheet-helpers.js';
 
 let designer: Person;

@@ -1,6 +1,6 @@
 import { AxeBuilder } from '@axe-core/playwright';
 import { afterAll, beforeAll, beforeEach, describe, expect, test } from 'vitest';
-import { openAs, type Person } from './harness/people.js';
+import { openAs, type Person } from './people.js';
 import { draftOnServer, makeLantern, saved, verdictHolds } from './sheet-helpers.js';
 
 let designer: Person;

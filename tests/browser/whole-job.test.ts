@@ -1,5 +1,5 @@
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
-import { openAs, type Person } from './harness/people.js';
+import { openAs, type Person } from './people.js';
 import { draftOnServer, makeLantern, saved, verdictHolds } from './sheet-helpers.js';
 
 /** The whole job in a real browser: designer, engineer and reviewer, from eight questions to the register. */
