@@ -47,6 +47,8 @@ function addClient(app: Express): void {
   app.use(
     '/assets',
     express.static(path.join(clientFolder, 'assets'), { immutable: true, maxAge: yearSeconds * 1000 }),
+    // A file of an earlier build is gone; the page in its place would only confuse a browser that wants a script.
+    unknownRoute,
   );
   app.use(express.static(clientFolder, { index: false, maxAge: 0 }));
   app.get('/{*path}', (request, response, next) => {
@@ -54,7 +56,8 @@ function addClient(app: Express): void {
       next();
       return;
     }
-    response.set('Cache-Control', 'no-cache').sendFile(path.join(clientFolder, 'index.html'));
+    // With a root of its own, so that a checkout below a folder like `.work` is served too.
+    response.set('Cache-Control', 'no-cache').sendFile('index.html', { root: clientFolder });
   });
 }
 
@@ -86,9 +89,12 @@ export function makeApp(context: AppContext, log: Logger): Express {
   app.use(
     pinoHttp({
       logger: log,
-      autoLogging: { ignore: (request) => request.url === '/api/v1/health' },
-      customLogLevel: (_request, response) => (response.statusCode >= 500 ? 'error' : 'debug'),
-      redact: ['req.headers.cookie', 'req.headers.authorization', 'res.headers["set-cookie"]'],
+      // Failures are logged once, where they become problems.
+      customLogLevel: () => 'debug',
+      serializers: {
+        req: ({ method, url }: { method: string; url: string }) => ({ method, url }),
+        res: ({ statusCode }: { statusCode: number }) => ({ statusCode }),
+      },
     }),
   );
   app.use(compression());

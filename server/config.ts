@@ -1,5 +1,5 @@
 import { randomBytes } from 'node:crypto';
-import { existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs';
+import { existsSync, linkSync, mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
 import { z } from 'zod';
 
@@ -18,7 +18,7 @@ const environmentSchema = z.object({
   NODE_ENV: z.enum(['production', 'development', 'test']).default('production'),
   /** Key of the access tokens, base64url, at least 32 bytes; without one a file in TRIMWICK_HOME is used. */
   SESSION_KEY: z.string().min(43).optional(),
-  LOG_LEVEL: z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'silent']).default('info'),
+  LOG_LEVEL: z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'silent']).default('warn'),
 });
 
 export interface Config {
@@ -35,19 +35,38 @@ export interface Config {
 /** A setting that is missing or wrong; told in one line. */
 export class ConfigError extends Error {}
 
-/** The key is kept outside the database: who reads the tables cannot sign tokens. */
+const keyBytes = 32;
+
+/**
+ * The key is kept outside the database: who reads the tables cannot sign tokens. Made on first use; written whole
+ * under another name first, so that a process that starts at the same moment never reads half of it.
+ */
 function readSessionKey(home: string): Uint8Array {
   const file = path.join(home, 'session.key');
-  if (existsSync(file)) return readFileSync(file);
-  mkdirSync(home, { recursive: true });
-  const key = randomBytes(32);
   try {
-    writeFileSync(file, key, { mode: 0o600, flag: 'wx' });
-    return key;
-  } catch {
-    // Another process made it at the same moment.
-    return readFileSync(file);
+    if (!existsSync(file)) {
+      mkdirSync(home, { recursive: true });
+      const own = `${file}.${String(process.pid)}`;
+      writeFileSync(own, randomBytes(keyBytes), { mode: 0o600 });
+      try {
+        linkSync(own, file);
+      } catch (error) {
+        // Another process was faster: its key is the key.
+        if ((error as NodeJS.ErrnoException).code !== 'EEXIST') throw error;
+      } finally {
+        rmSync(own, { force: true });
+      }
+    }
+    const key = readFileSync(file);
+    if (key.length >= keyBytes) return key;
+  } catch (error) {
+    throw new ConfigError(`The key ${file} cannot be read or made: ${(error as Error).message}`);
   }
+  throw new ConfigError(`The key ${file} is not whole: remove it, and everybody signs in anew`);
+}
+
+function isLoopback(url: string): boolean {
+  return ['127.0.0.1', 'localhost', '[::1]'].includes(new URL(url).hostname);
 }
 
 /** @throws ConfigError naming each setting that is wrong */
@@ -58,13 +77,18 @@ export function readConfig(environment: NodeJS.ProcessEnv): Config {
     throw new ConfigError(`Settings: ${lines.join('; ')}`);
   }
   const settings = parsed.data;
+  const demo = settings.TRIMWICK_DEMO === '1';
+  // The demo people’s password is printed in the documentation.
+  if (demo && settings.NODE_ENV === 'production' && !isLoopback(settings.DATABASE_URL)) {
+    throw new ConfigError('Settings: TRIMWICK_DEMO: no demo teams in production beside a database elsewhere');
+  }
   return {
     databaseUrl: settings.DATABASE_URL,
     ownerUrl: settings.DATABASE_OWNER_URL ?? settings.DATABASE_URL,
     port: settings.PORT,
     host: settings.HOST,
     home: path.resolve(settings.TRIMWICK_HOME),
-    demo: settings.TRIMWICK_DEMO === '1',
+    demo,
     sessionKey: settings.SESSION_KEY
       ? Buffer.from(settings.SESSION_KEY, 'base64url')
       : readSessionKey(path.resolve(settings.TRIMWICK_HOME)),

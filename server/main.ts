@@ -1,9 +1,9 @@
 import { createServer } from 'node:http';
-import { pino } from 'pino';
 import { makeApp } from './app.js';
 import { ConfigError, readConfig } from './config.js';
 import type { AppContext } from './context.js';
 import { makeDataSource } from './database/data-source.js';
+import { makeLog } from './log.js';
 import { Workers } from './workers/pool.js';
 
 /** How long open requests may take to end after a stop was asked for [ms]. */
@@ -16,7 +16,7 @@ function fail(message: string): never {
 
 async function start(): Promise<void> {
   const config = readConfig(process.env);
-  const log = pino({ level: config.logLevel === 'info' ? 'warn' : config.logLevel });
+  const log = makeLog(config.logLevel);
   const dataSource = makeDataSource(config.databaseUrl);
   try {
     await dataSource.initialize();

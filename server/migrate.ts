@@ -1,3 +1,4 @@
+import type { DataSource } from 'typeorm';
 import { ConfigError, readConfig, type Config } from './config.js';
 import type { AppContext } from './context.js';
 import { makeDataSource } from './database/data-source.js';
@@ -6,14 +7,29 @@ import { loadDemoTeams } from './database/seeds-demo.js';
 import { loadReferenceValues } from './database/seeds-reference.js';
 import { Workers } from './workers/pool.js';
 
+/** Held while a process migrates, so that two that start at once do so one after the other. */
+const migrationLock = '4310, 3';
+
+/** Migrations, grants and reference values, with the owner’s role. */
+async function prepareSchema(owner: DataSource, applicationRole: string): Promise<void> {
+  const runner = owner.createQueryRunner();
+  try {
+    await runner.query(`SELECT pg_advisory_lock(${migrationLock})`);
+    await owner.runMigrations({ transaction: 'all' });
+    await grantToApplication(owner, applicationRole);
+    await loadReferenceValues(owner);
+    await runner.query(`SELECT pg_advisory_unlock(${migrationLock})`);
+  } finally {
+    await runner.release();
+  }
+}
+
 /** Brings a database up to date: migrations, grants, reference values, and where they are wanted the demo teams. */
 export async function migrate(config: Config): Promise<void> {
   const owner = makeDataSource(config.ownerUrl);
   await owner.initialize();
   try {
-    await owner.runMigrations({ transaction: 'all' });
-    await grantToApplication(owner, decodeURIComponent(new URL(config.databaseUrl).username));
-    await loadReferenceValues(owner);
+    await prepareSchema(owner, decodeURIComponent(new URL(config.databaseUrl).username));
   } finally {
     await owner.destroy();
   }

@@ -35,6 +35,7 @@ function operation(route: Route): ZodOpenApiOperationObject {
       [String(status)]: schema
         ? { description: 'Done', content: { 'application/json': { schema } } }
         : { description: 'Done, nothing to say' },
+      ...Object.fromEntries((route.refusals ?? []).map(({ status: code, when }) => [String(code), problem(when)])),
       ...(isPublic ? {} : { '401': problem('Not signed in'), '403': problem('None of your roles may do this') }),
       ...(route.params ? { '404': problem('Not there, or another team’s') } : {}),
       ...(route.body

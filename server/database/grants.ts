@@ -10,6 +10,9 @@ const insertOnly = [
   'audit_entries',
 ];
 
+/** The only tables that the application removes rows from: what it keeps of people’s work is never deleted. */
+const removable = ['sessions', 'sign_in_failures'];
+
 function quoted(name: string): string {
   return `"${name.replaceAll('"', '""')}"`;
 }
@@ -20,8 +23,10 @@ export async function grantToApplication(dataSource: DataSource, applicationRole
   if (owner === applicationRole) return;
   const role = quoted(applicationRole);
   await dataSource.query(`GRANT USAGE ON SCHEMA public TO ${role}`);
-  await dataSource.query(`GRANT SELECT, INSERT, UPDATE, DELETE ON ALL TABLES IN SCHEMA public TO ${role}`);
-  await dataSource.query(`REVOKE UPDATE, DELETE ON ${insertOnly.join(', ')} FROM ${role}`);
+  await dataSource.query(`GRANT SELECT, INSERT, UPDATE ON ALL TABLES IN SCHEMA public TO ${role}`);
+  await dataSource.query(`REVOKE DELETE, TRUNCATE ON ALL TABLES IN SCHEMA public FROM ${role}`);
+  await dataSource.query(`GRANT DELETE ON ${removable.join(', ')} TO ${role}`);
+  await dataSource.query(`REVOKE UPDATE ON ${insertOnly.join(', ')} FROM ${role}`);
   await dataSource.query(`REVOKE INSERT ON reference_values, reference_value_versions FROM ${role}`);
-  await dataSource.query(`REVOKE INSERT, UPDATE, DELETE ON migrations FROM ${role}`);
+  await dataSource.query(`REVOKE INSERT, UPDATE ON migrations FROM ${role}`);
 }

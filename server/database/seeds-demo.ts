@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import { readFileSync } from 'node:fs';
 import type { Role } from '../../shared/roles.js';
+import type { Assembly } from '../../shared/schemas/assembly-records.js';
 import { assemblyDocumentSchema } from '../../shared/schemas/assembly.js';
 import { resolveDemoReferences } from '../../shared/schemas/demo.js';
 import type { Actor, AppContext } from '../context.js';
@@ -8,6 +9,14 @@ import { createAssembly } from '../services/assemblies.js';
 import { askForDecision } from '../services/askDecision.js';
 import { decide } from '../services/decide.js';
 import { dataFolder } from './data-folder.js';
+
+/** Names of the demo’s own requests: sent again they answer with what the first made, so that loading can go on after a stop. */
+const requests = {
+  stallLantern: '6b0d6d52-5a0e-4c6e-9a55-1d6d6b3e4310',
+  driverBox: '0f3d9a41-7c1b-4f0b-8f5e-2c5a7a1e4310',
+  loadBox: 'c7a5e0d8-3b52-4d8e-b1a4-9e2f5b7c4310',
+  loadBoxDecision: 'e2c49d10-86fb-4a3e-9d07-5b1c8e6f4310',
+};
 
 /** The published password of the demo people; such teams are only ever made on a loopback start. */
 const demoPassword = 'trim-the-wick-4310';
@@ -29,16 +38,16 @@ const demoTeams: { name: string; people: { name: string; email: string; roles: R
   },
 ];
 
-async function makeTeams(context: AppContext): Promise<Map<string, Actor> | null> {
+async function makeTeams(context: AppContext): Promise<void> {
   const { dataSource, workers, now } = context;
   const passwordHash = await workers.hashPassword(demoPassword);
-  return dataSource.transaction(async (manager) => {
+  await dataSource.transaction(async (manager) => {
     await manager.query('SELECT pg_advisory_xact_lock(4310, 2)');
     const [known] = await manager.query<unknown[]>('SELECT 1 FROM users WHERE email = $1', [
       demoTeams[0]?.people[0]?.email,
     ]);
-    if (known) return null;
-    const actors = new Map<string, Actor>();
+    if (known) return;
+    const ids = new Map<string, { userId: string; teamId: string }>();
     for (const team of demoTeams) {
       const teamId = randomUUID();
       await manager.query('INSERT INTO teams (id, name, created_at) VALUES ($1, $2, $3)', [teamId, team.name, now()]);
@@ -53,20 +62,29 @@ async function makeTeams(context: AppContext): Promise<Map<string, Actor> | null
           userId,
           person.roles,
         ]);
-        const { name, email, roles } = person;
-        actors.set(email, { userId, name, email, teamId, teamName: team.name, roles, sessionId: randomUUID() });
+        ids.set(person.email, { userId, teamId });
       }
     }
     // The administrator belongs to both, so that changing teams can be tried.
-    const admin = actors.get('admin@brackenmoor.example');
-    const other = actors.get('engineer@saltmarsh.example');
+    const admin = ids.get('admin@brackenmoor.example');
+    const other = ids.get('engineer@saltmarsh.example');
     await manager.query('INSERT INTO memberships (team_id, user_id, roles) VALUES ($1, $2, $3)', [
       other?.teamId,
       admin?.userId,
       ['viewer'],
     ]);
-    return actors;
   });
+}
+
+/** The demo’s people in the first team as they stand now. */
+async function findPeople(context: AppContext): Promise<Map<string, Actor>> {
+  const rows = await context.dataSource.query<Omit<Actor, 'sessionId'>[]>(
+    `SELECT u.id AS "userId", u.name, u.email, t.id AS "teamId", t.name AS "teamName", m.roles
+     FROM users u JOIN memberships m ON m.user_id = u.id JOIN teams t ON t.id = m.team_id
+     WHERE u.email LIKE '%@brackenmoor.example' AND t.name = $1`,
+    [demoTeams[0]?.name],
+  );
+  return new Map(rows.map((row) => [row.email, { ...row, sessionId: randomUUID() }]));
 }
 
 async function readDemo(context: AppContext, file: string): Promise<Record<string, unknown>> {
@@ -86,25 +104,22 @@ async function readDemo(context: AppContext, file: string): Promise<Record<strin
   return assemblyDocumentSchema.parse(resolved) as unknown as Record<string, unknown>;
 }
 
-/** Makes the two demo teams and their three assemblies through the services that people use. Does nothing the second time. */
-export async function loadDemoTeams(context: AppContext): Promise<void> {
-  const actors = await makeTeams(context);
-  if (actors === null) return;
-  const person = (role: string): Actor => {
-    const actor = actors.get(`${role}@brackenmoor.example`);
-    if (!actor) throw new Error(`No demo ${role}`);
-    return actor;
-  };
-  await createAssembly(context, person('designer'), { document: await readDemo(context, 'stall-lantern') });
-  await createAssembly(context, person('engineer'), { document: await readDemo(context, 'driver-box') });
-  const box = await createAssembly(context, person('engineer'), { document: await readDemo(context, 'load-box') });
-  const asked = await askForDecision(context, person('engineer'), {
+async function makeAssembly(context: AppContext, actor: Actor, file: string, requestId: string): Promise<Assembly> {
+  return createAssembly(context, actor, { document: await readDemo(context, file), requestId });
+}
+
+/** Asks for the load box’s decision and has it accepted, through the same services that people use. */
+async function decideOnLoadBox(context: AppContext, engineer: Actor, reviewer: Actor): Promise<void> {
+  const box = await makeAssembly(context, engineer, 'load-box', requests.loadBox);
+  const asked = await askForDecision(context, engineer, {
     assemblyId: box.id,
     expectedVersion: box.draft.version,
     statement: 'Run the load box at its present current, continuously, on an open bench and in the warm store.',
     covers: { product: 'Bench load box', variant: 'four resistors', file: '', fileSha256: '' },
+    requestId: requests.loadBoxDecision,
   });
-  await decide(context, person('reviewer'), asked.id, {
+  if (asked.state !== 'asked' || asked.version !== 1) return;
+  await decide(context, reviewer, asked.id, {
     expectedVersion: asked.version,
     outcome: 'accepted',
     reason: 'All limits hold in the warm store with the margins of the plain workshop set; the case stays touchable.',
@@ -115,4 +130,26 @@ export async function loadDemoTeams(context: AppContext): Promise<void> {
     })),
     password: demoPassword,
   });
+}
+
+/**
+ * Makes the two demo teams and their three assemblies. What an earlier, interrupted start has made is kept; where all
+ * is there, or somebody has been at work, nothing is done.
+ */
+export async function loadDemoTeams(context: AppContext): Promise<void> {
+  await makeTeams(context);
+  const people = await findPeople(context);
+  const [designer, engineer, reviewer] = ['designer', 'engineer', 'reviewer'].map((role) =>
+    people.get(`${role}@brackenmoor.example`),
+  );
+  // Somebody has changed the team since: it is theirs now.
+  if (!designer || !engineer || !reviewer) return;
+  const [complete] = await context.dataSource.query<unknown[]>(
+    'SELECT 1 FROM decision_events WHERE team_id = $1 AND sequence = 2',
+    [engineer.teamId],
+  );
+  if (complete) return;
+  await makeAssembly(context, designer, 'stall-lantern', requests.stallLantern);
+  await makeAssembly(context, engineer, 'driver-box', requests.driverBox);
+  await decideOnLoadBox(context, engineer, reviewer);
 }

@@ -4,13 +4,14 @@ import type { Logger } from 'pino';
 import { DomainError } from '../errors.js';
 
 /** SQLSTATE classes and socket errors that say the database cannot be reached, not that a query was wrong. */
-const unreachable = /^(ECONNREFUSED|ECONNRESET|EPIPE|ETIMEDOUT|57P0[1-5]|08\w{3}|53300)$/;
+const unreachable =
+  /^(ECONNREFUSED|ECONNRESET|EPIPE|ETIMEDOUT|ENOTFOUND|EAI_AGAIN|EHOSTUNREACH|57P0[1-5]|08\w{3}|53300)$/;
 
 function isDatabaseDown(error: unknown): boolean {
   if (!(error instanceof Error)) return false;
   const { code } = error as { code?: unknown };
   if (typeof code === 'string' && unreachable.test(code)) return true;
-  return /Connection terminated|timeout exceeded when trying to connect|the database system is (starting|shutting)/.test(
+  return /Connection terminated|not queryable|timeout exceeded when trying to connect|the database system is (starting|shutting)/.test(
     error.message,
   );
 }
@@ -26,7 +27,10 @@ function fromBodyParser(error: unknown): DomainError | null {
   if (typeof type === 'string' && /^(entity|request)\./.test(type)) {
     return new DomainError(400, 'unreadable', 'The body could not be read');
   }
-  return error instanceof URIError ? new DomainError(400, 'unreadable', 'The address is not readable') : null;
+  // Express and its parsers mark what the caller did wrong with a status.
+  const { status } = error as { status?: unknown };
+  const isCallers = error instanceof URIError || (typeof status === 'number' && status >= 400 && status < 500);
+  return isCallers ? new DomainError(400, 'unreadable', 'The request is not readable') : null;
 }
 
 function asDomainError(error: unknown): DomainError | null {
@@ -35,12 +39,10 @@ function asDomainError(error: unknown): DomainError | null {
     return new DomainError(
       503,
       'database-down',
-      'The database cannot be reached just now: nothing was changed, try again',
+      'The database cannot be reached just now: this may not have been saved, try again in a moment',
       [],
       {},
-      {
-        'Retry-After': '2',
-      },
+      { 'Retry-After': '2' },
     );
   }
   return fromBodyParser(error);

@@ -67,6 +67,7 @@ export const decisionRoutes = [
     params: idSchema,
     body: decideSchema,
     answers: { status: 200, schema: decisionSchema },
+    refusals: [{ status: 429, when: 'Too many wrong passwords; Retry-After says how long' }],
     handle: ({ context, actor, input }) => decide(context, actor, input.params.id, input.body),
   }),
   defineRoute({

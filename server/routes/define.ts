@@ -4,7 +4,7 @@ import { may, roles, type Capability } from '../../shared/roles.js';
 import type { Actor, AppContext } from '../context.js';
 import { DomainError, forbidden, invalid } from '../errors.js';
 import { requireSession } from '../middleware/session.js';
-import { fieldErrors } from '../validation.js';
+import { fieldErrors, unkeepableParts } from '../validation.js';
 
 type Parsed<T> = T extends z.ZodType ? z.output<T> : undefined;
 
@@ -32,6 +32,8 @@ export interface Route<
   body?: B;
   /** Status and schema of the answer; no schema for 204. */
   answers: { status: number; schema?: z.ZodType };
+  /** Refusals of its own, beside those that follow from session, role and input. */
+  refusals?: { status: number; when: string }[];
   handle: (call: {
     context: AppContext;
     actor: Actor;
@@ -52,6 +54,8 @@ export function defineRoute<
 
 function parse(schema: z.ZodType | undefined, value: unknown): unknown {
   if (!schema) return undefined;
+  const unkeepable = unkeepableParts(value);
+  if (unkeepable.length > 0) throw invalid(unkeepable);
   const parsed = schema.safeParse(value, { reportInput: true });
   if (!parsed.success) throw invalid(fieldErrors(parsed.error));
   return parsed.data;
@@ -61,7 +65,8 @@ function parse(schema: z.ZodType | undefined, value: unknown): unknown {
 function parseParameters(schema: z.ZodType | undefined, value: unknown): unknown {
   if (!schema) return undefined;
   const parsed = schema.safeParse(value);
-  if (!parsed.success) throw new DomainError(404, 'not-found', 'There is no such thing');
+  if (!parsed.success || unkeepableParts(value).length > 0)
+    throw new DomainError(404, 'not-found', 'There is no such thing');
   return parsed.data;
 }
 

@@ -23,6 +23,11 @@ export const sessionRoutes = [
     access: 'public',
     body: signInSchema,
     answers: { status: 200, schema: sessionSchema },
+    refusals: [
+      { status: 401, when: 'Address and password do not go together' },
+      { status: 403, when: 'No team any more, or a request of another site' },
+      { status: 429, when: 'Too many wrong passwords; Retry-After says how long' },
+    ],
     handle: async ({ context, input, request, response }) => {
       const session = await signIn(context, input.body);
       const actor = await findActor(context, session.sessionId);
@@ -87,6 +92,7 @@ export const sessionRoutes = [
     access: 'read',
     body: changePasswordSchema,
     answers: { status: 204 },
+    refusals: [{ status: 429, when: 'Too many wrong passwords; Retry-After says how long' }],
     handle: ({ context, actor, input }) => changePassword(context, actor, input.body),
   }),
 ];

@@ -52,9 +52,9 @@ async function record(
   } else {
     const [, changed] = await manager.query<[unknown, number]>(
       `UPDATE decisions SET state = 'asked', version = version + 1, revision_id = $4, statement = $5, covers = $6,
-         outline = $7, asked_by = $8, asked_at = $9, decided_by = NULL, decided_at = NULL
+         outline = $7, asked_by = $8, asked_at = $9, decided_by = NULL, decided_at = NULL, request_id = $10
        WHERE team_id = $1 AND id = $2 AND assembly_id = $3 AND state = 'returned'`,
-      [actor.teamId, id, ask.assemblyId, ...shared],
+      [actor.teamId, id, ask.assemblyId, ...shared, ask.requestId ?? null],
     );
     if (changed === 0) throw conflict('not-returned', 'Only a request that was returned can be asked again');
   }

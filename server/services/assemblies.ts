@@ -4,6 +4,7 @@ import type { Assembly, AssemblySummary } from '../../shared/schemas/assembly-re
 import type { ListQuery } from '../../shared/schemas/list.js';
 import { inBackground, type Actor, type AppContext } from '../context.js';
 import { conflict, notFound } from '../errors.js';
+import { canonicalJson } from '../records/canonical.js';
 import {
   noteContribution,
   presentSummary,
@@ -44,21 +45,16 @@ export async function listAssemblies(
      LIMIT ${String(query.pageSize)} OFFSET ${String((query.page - 1) * query.pageSize)}`,
     parameters,
   );
-  for (const row of rows.filter(verdictIsOld)) refreshLater(context, actor.teamId, row);
+  for (const row of rows.filter(verdictIsOld)) inBackground(context, refreshVerdict(context, actor.teamId, row.id));
   return { items: rows.map(presentSummary), total: Number(count), page: query.page };
-}
-
-function refreshLater(context: AppContext, teamId: string, row: SummaryRow): void {
-  const draft = { teamId, assemblyId: row.id, version: row.draft_version, document: row.draft_document };
-  inBackground(context, refreshVerdict(context, draft));
 }
 
 /** @throws DomainError 404 where the team has no such assembly */
 export async function getAssembly(context: AppContext, actor: Actor, id: string): Promise<Assembly> {
-  const [row] = await context.dataSource.query<SummaryRow[]>(`SELECT ${summaryColumns} ${summaryFrom} AND a.id = $2`, [
-    actor.teamId,
-    id,
-  ]);
+  const [row] = await context.dataSource.query<(SummaryRow & { draft_document: Record<string, unknown> })[]>(
+    `SELECT ${summaryColumns}, d.document AS draft_document ${summaryFrom} AND a.id = $2`,
+    [actor.teamId, id],
+  );
   if (!row) throw notFound('assembly');
   const revisions = await context.dataSource.query<
     { id: string; number: number; note: string; created_at: Date; created_by: string; name: string }[]
@@ -118,7 +114,7 @@ async function insertAssembly(
      VALUES ($1, $2, 1, $3, $4, $5)`,
     [actor.teamId, id, JSON.stringify(values.document), actor.userId, at],
   );
-  await noteContribution(manager, { teamId: actor.teamId, assemblyId: id, userId: actor.userId, at });
+  await noteContribution(manager, { teamId: actor.teamId, assemblyId: id, userId: actor.userId, at, version: 1 });
   return id;
 }
 
@@ -136,8 +132,7 @@ export async function createAssembly(
     );
     return getAssembly(context, actor, earlier?.id ?? '');
   }
-  const draft = { teamId: actor.teamId, assemblyId: made, version: 1, document: input.document };
-  inBackground(context, refreshVerdict(context, draft));
+  inBackground(context, refreshVerdict(context, actor.teamId, made));
   return getAssembly(context, actor, made);
 }
 
@@ -154,19 +149,54 @@ export async function duplicateAssembly(
   const made = await context.dataSource.transaction(async (manager) => {
     const copy = await insertAssembly(manager, actor, at, { document, duplicatedFrom: id });
     await manager.query(
-      `INSERT INTO assembly_contributions (team_id, assembly_id, user_id, last_edited_at)
-       SELECT team_id, $3, user_id, $4 FROM assembly_contributions WHERE team_id = $1 AND assembly_id = $2
+      `INSERT INTO assembly_contributions (team_id, assembly_id, user_id, last_edited_at, last_version)
+       SELECT team_id, $3, user_id, $4, 1 FROM assembly_contributions WHERE team_id = $1 AND assembly_id = $2
        ON CONFLICT DO NOTHING`,
       [actor.teamId, id, copy, at],
     );
     return copy ?? '';
   });
-  inBackground(context, refreshVerdict(context, { teamId: actor.teamId, assemblyId: made, version: 1, document }));
+  inBackground(context, refreshVerdict(context, actor.teamId, made));
   return getAssembly(context, actor, made);
 }
 
+interface DraftSave {
+  expectedVersion: number;
+  document: Record<string, unknown>;
+}
+
+/** Writes the draft where it is still at the expected version; null where it is not. */
+async function writeDraft(context: AppContext, actor: Actor, id: string, input: DraftSave) {
+  return context.dataSource.transaction(async (manager) => {
+    const at = context.now();
+    const [saved] = await manager.query<[{ version: number }[], number]>(
+      `UPDATE assembly_drafts SET document = $4, version = version + 1, updated_by = $5, updated_at = $6
+       WHERE team_id = $1 AND assembly_id = $2 AND version = $3 RETURNING version`,
+      [actor.teamId, id, input.expectedVersion, JSON.stringify(input.document), actor.userId, at],
+    );
+    const version = saved[0]?.version;
+    if (version === undefined) return null;
+    await manager.query('UPDATE assemblies SET name = $3 WHERE team_id = $1 AND id = $2', [
+      actor.teamId,
+      id,
+      nameOf(input.document),
+    ]);
+    await noteContribution(manager, { teamId: actor.teamId, assemblyId: id, userId: actor.userId, at, version });
+    return { version, updatedAt: at.toISOString() };
+  });
+}
+
+/** True where what stands is this very save, sent again since its answer was lost on the way. */
+function isSameSave(draft: Assembly['draft'], actor: Actor, input: DraftSave): boolean {
+  return (
+    draft.version === input.expectedVersion + 1 &&
+    draft.updatedBy.id === actor.userId &&
+    canonicalJson(draft.document) === canonicalJson(input.document)
+  );
+}
+
 /**
- * Saves the draft as typed.
+ * Saves the draft as typed. The same save sent again answers as the first did.
  *
  * @throws DomainError 409 with the other person’s version where it has moved since; nothing of either is lost
  */
@@ -174,45 +204,28 @@ export async function saveDraft(
   context: AppContext,
   actor: Actor,
   id: string,
-  input: { expectedVersion: number; document: Record<string, unknown> },
+  input: DraftSave,
 ): Promise<{ version: number; updatedAt: string }> {
-  const at = context.now();
-  const version = await context.dataSource.transaction(async (manager) => {
-    const [saved] = await manager.query<[{ version: number }[], number]>(
-      `UPDATE assembly_drafts SET document = $4, version = version + 1, updated_by = $5, updated_at = $6
-       WHERE team_id = $1 AND assembly_id = $2 AND version = $3 RETURNING version`,
-      [actor.teamId, id, input.expectedVersion, JSON.stringify(input.document), actor.userId, at],
-    );
-    const row = saved[0];
-    if (!row) return null;
-    await manager.query('UPDATE assemblies SET name = $3 WHERE team_id = $1 AND id = $2', [
-      actor.teamId,
-      id,
-      nameOf(input.document),
-    ]);
-    await noteContribution(manager, { teamId: actor.teamId, assemblyId: id, userId: actor.userId, at });
-    return row.version;
-  });
-  if (version === null) throw await draftConflict(context, actor, id, input.document);
-  inBackground(
-    context,
-    refreshVerdict(context, { teamId: actor.teamId, assemblyId: id, version, document: input.document }),
-  );
-  return { version, updatedAt: at.toISOString() };
+  const saved = await writeDraft(context, actor, id, input);
+  if (saved === null) {
+    const { draft } = await getAssembly(context, actor, id);
+    if (isSameSave(draft, actor, input)) return { version: draft.version, updatedAt: draft.updatedAt };
+    throw draftMoved(draft, input.document);
+  }
+  inBackground(context, refreshVerdict(context, actor.teamId, id));
+  return saved;
 }
 
-/** The refusal that carries both versions: what stands now as `current`, what was sent as `yours`. */
-export async function draftConflict(
-  context: AppContext,
-  actor: Actor,
-  id: string,
-  yours?: Record<string, unknown>,
-): Promise<Error> {
-  const { draft } = await getAssembly(context, actor, id);
+function draftMoved(draft: Assembly['draft'], yours?: Record<string, unknown>): Error {
   return conflict('draft-moved', `${draft.updatedBy.name} has saved this draft meanwhile`, {
     current: draft,
     ...(yours ? { yours } : {}),
   });
+}
+
+/** The refusal for what was asked on a draft that has moved since; what stands now is in it as `current`. */
+export async function draftConflict(context: AppContext, actor: Actor, id: string): Promise<Error> {
+  return draftMoved((await getAssembly(context, actor, id)).draft);
 }
 
 export async function setArchived(context: AppContext, actor: Actor, id: string, archived: boolean): Promise<Assembly> {

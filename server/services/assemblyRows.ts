@@ -10,7 +10,6 @@ export interface SummaryRow {
   created_by: string;
   created_by_name: string;
   draft_version: number;
-  draft_document: Record<string, unknown>;
   updated_at: Date;
   updated_by: string;
   updated_by_name: string;
@@ -44,7 +43,7 @@ export const summaryFrom = `
 
 export const summaryColumns = `
   a.id, a.name, a.archived_at, a.created_by, cu.name AS created_by_name,
-  d.version AS draft_version, d.document AS draft_document, d.updated_at, d.updated_by, uu.name AS updated_by_name,
+  d.version AS draft_version, d.updated_at, d.updated_by, uu.name AS updated_by_name,
   d.verdict, d.verdict_version, d.verdict_engine,
   r.number AS revision, r.draft_version AS revision_draft_version,
   x.id AS decision_id, x.number AS decision_number, x.state AS decision_state, x.revision AS decision_revision`;
@@ -80,11 +79,12 @@ export function presentSummary(row: SummaryRow): AssemblySummary {
 /** Remembers that a person changed an assembly: he or she is not independent of it any more. */
 export async function noteContribution(
   manager: EntityManager,
-  entry: { teamId: string; assemblyId: string; userId: string; at: Date },
+  entry: { teamId: string; assemblyId: string; userId: string; at: Date; version: number },
 ): Promise<void> {
   await manager.query(
-    `INSERT INTO assembly_contributions (team_id, assembly_id, user_id, last_edited_at) VALUES ($1, $2, $3, $4)
-     ON CONFLICT (team_id, assembly_id, user_id) DO UPDATE SET last_edited_at = EXCLUDED.last_edited_at`,
-    [entry.teamId, entry.assemblyId, entry.userId, entry.at],
+    `INSERT INTO assembly_contributions (team_id, assembly_id, user_id, last_edited_at, last_version)
+     VALUES ($1, $2, $3, $4, $5) ON CONFLICT (team_id, assembly_id, user_id)
+     DO UPDATE SET last_edited_at = EXCLUDED.last_edited_at, last_version = EXCLUDED.last_version`,
+    [entry.teamId, entry.assemblyId, entry.userId, entry.at, entry.version],
   );
 }

@@ -18,15 +18,43 @@ async function verdictOn(context: AppContext, typed: unknown): Promise<Verdict |
   }
 }
 
-/** Computes the verdict on one version of a draft and keeps it, unless the draft has moved on. */
-export async function refreshVerdict(
-  context: AppContext,
-  draft: { teamId: string; assemblyId: string; version: number; document: unknown },
-): Promise<void> {
+/** Computes the verdict on the draft as it stands and keeps it, unless the draft has moved on meanwhile. */
+async function compute(context: AppContext, teamId: string, assemblyId: string): Promise<void> {
+  const [draft] = await context.dataSource.query<{ version: number; document: unknown }[]>(
+    `SELECT version, document FROM assembly_drafts WHERE team_id = $1 AND assembly_id = $2
+     AND (verdict_version IS DISTINCT FROM version OR verdict_engine IS DISTINCT FROM $3)`,
+    [teamId, assemblyId, engineVersion],
+  );
+  if (!draft) return;
   const verdict = await verdictOn(context, draft.document);
   await context.dataSource.query(
     `UPDATE assembly_drafts SET verdict = $4, verdict_version = $3, verdict_engine = $5
      WHERE team_id = $1 AND assembly_id = $2 AND version = $3`,
-    [draft.teamId, draft.assemblyId, draft.version, verdict === null ? null : JSON.stringify(verdict), engineVersion],
+    [teamId, assemblyId, draft.version, verdict === null ? null : JSON.stringify(verdict), engineVersion],
   );
+}
+
+/** Assemblies whose verdict is being computed, and whether one more round is wanted after it. */
+const running = new Map<string, { again: boolean }>();
+
+/**
+ * Brings the kept verdict of a draft up to date. Calls that come while one runs share a single further round, so that
+ * somebody who types keeps no more than one thread busy.
+ */
+export async function refreshVerdict(context: AppContext, teamId: string, assemblyId: string): Promise<void> {
+  const present = running.get(assemblyId);
+  if (present) {
+    present.again = true;
+    return;
+  }
+  const own = { again: true };
+  running.set(assemblyId, own);
+  try {
+    while (own.again) {
+      own.again = false;
+      await compute(context, teamId, assemblyId);
+    }
+  } finally {
+    running.delete(assemblyId);
+  }
 }

@@ -4,9 +4,8 @@ import type { Decision, decideSchema, withdrawSchema } from '../../shared/schema
 import { may } from '../../shared/roles.js';
 import type { Actor, AppContext } from '../context.js';
 import { conflict, forbidden, invalid, notFound } from '../errors.js';
-import { mayDecide } from '../policies/independence.js';
 import { addEvent, lockTeamRecord } from './decisionEvents.js';
-import { contributorIds, getDecision } from './decisionReading.js';
+import { getDecision } from './decisionReading.js';
 import { confirmPassword } from './sessions.js';
 
 type Decide = z.infer<typeof decideSchema>;
@@ -33,7 +32,10 @@ async function lock(manager: EntityManager, actor: Actor, id: string): Promise<L
 }
 
 /** Tells the one who came second what has happened meanwhile. */
-function refuseStale(row: LockedDecision, expectedVersion: number): void {
+function refuseStale(
+  row: Pick<LockedDecision, 'state' | 'version' | 'decided_by_name'>,
+  expectedVersion: number,
+): void {
   if (row.state === 'asked' && row.version === expectedVersion) return;
   const who = row.decided_by_name === null ? '' : ` by ${row.decided_by_name}`;
   const message =
@@ -54,6 +56,23 @@ function refuseOpenFlags(decision: Decision, input: Decide): void {
     })),
     'Every red flag must be ticked with a reason before this can be accepted',
   );
+}
+
+/** What is said must speak of things that the snapshot has. */
+function refuseUnknown(decision: Decision, input: Decide): void {
+  const flags = new Set(decision.redFlags.map(({ id }) => id));
+  const scenarios = new Set(decision.snapshot.estimates.map(({ scenario }) => scenario));
+  const errors = [
+    ...input.flagsTaken.flatMap(({ id }, i) =>
+      flags.has(id) ? [] : [{ path: `/flagsTaken/${String(i)}/id`, message: 'There is no such red flag here' }],
+    ),
+    ...input.conditions.flatMap(({ scenario }, i) =>
+      scenario === undefined || scenarios.has(scenario)
+        ? []
+        : [{ path: `/conditions/${String(i)}/scenario`, message: 'There is no such scenario in what was asked' }],
+    ),
+  ];
+  if (errors.length > 0) throw invalid(errors);
 }
 
 /** An accepted revision takes the place of the assembly’s earlier accepted ones. */
@@ -92,18 +111,10 @@ async function supersedeEarlier(
  */
 export async function decide(context: AppContext, actor: Actor, id: string, input: Decide): Promise<Decision> {
   const decision = await getDecision(context, actor, id);
+  refuseStale({ ...decision, decided_by_name: decision.decidedBy?.name ?? null }, input.expectedVersion);
+  if (!decision.mayDecide) throw forbidden(decision.mayDecideWhy, 'not-independent');
+  refuseUnknown(decision, input);
   const accepts = input.outcome === 'accepted' || input.outcome === 'accepted-with-conditions';
-  const contributors = await context.dataSource.query<{ revision_id: string }[]>(
-    'SELECT revision_id FROM decisions WHERE team_id = $1 AND id = $2',
-    [actor.teamId, id],
-  );
-  const facts = {
-    state: 'asked',
-    askedBy: decision.askedBy.id,
-    contributorIds: await contributorIds(context, actor.teamId, contributors[0]?.revision_id ?? ''),
-  };
-  const allowed = mayDecide(actor, facts);
-  if (!allowed.may) throw forbidden(allowed.why, 'not-independent');
   if (accepts) {
     refuseOpenFlags(decision, input);
     await confirmPassword(context, actor, input.password ?? '', '/password');

@@ -50,15 +50,41 @@ function methodFlags(estimate: Estimate): RedFlag[] {
   return flags;
 }
 
+/** Names of what holds a value from memory, and how many values that are. */
+function fromMemory(part: unknown, name: string, found: Map<string, number>): void {
+  if (typeof part !== 'object' || part === null) return;
+  const own = 'slug' in part && 'name' in part && typeof part.name === 'string' ? part.name : name;
+  if ('standing' in part && part.standing === 'from-memory') found.set(own, (found.get(own) ?? 0) + 1);
+  for (const entry of Object.values(part)) fromMemory(entry, own, found);
+}
+
+/** One flag for all values of the materials, finishes, part types and rules in use that are still to be verified. */
+function memoryFlags(basis: unknown): RedFlag[] {
+  const found = new Map<string, number>();
+  fromMemory(basis, 'the assembly', found);
+  if (found.size === 0) return [];
+  const total = [...found.values()].reduce((sum, count) => sum + count, 0);
+  const names = [...found].map(([name, count]) => `${name} (${String(count)})`).join(', ');
+  const words = `${String(total)} values in use are from memory, to be verified: ${names}`;
+  return [{ id: 'from-memory:values', words }];
+}
+
 /**
- * What a reviewer must look at before accepting: limits exceeded or tight, assumptions that matter, binding values from memory,
+ * What a reviewer must look at before accepting: limits exceeded or tight, assumptions that matter, values from memory,
  * what could not be checked, runaway close. Worst first; each once.
+ *
+ * @param basis document with its values in place, and the rule set
  */
-export function redFlags(estimates: readonly Estimate[]): RedFlag[] {
+export function redFlags(estimates: readonly Estimate[], basis: unknown): RedFlag[] {
   const must = estimates.filter(({ scenario, scenarios }) =>
     scenarios.some((s) => s.scenario === scenario && s.mustHold),
   );
-  const all = [...must.flatMap(limitFlags), ...must.flatMap(inputFlags), ...must.flatMap(methodFlags)];
+  const all = [
+    ...must.flatMap(limitFlags),
+    ...must.flatMap(inputFlags),
+    ...must.flatMap(methodFlags),
+    ...memoryFlags(basis),
+  ];
   const exceeded = (flag: RedFlag) => (flag.id.startsWith('exceeds:') ? 0 : 1);
   return [...new Map(all.map((flag) => [flag.id, flag])).values()].sort((a, b) => exceeded(a) - exceeded(b));
 }

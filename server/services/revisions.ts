@@ -17,12 +17,14 @@ export function finishedDocument(document: unknown): AssemblyDocument {
   return parsed.data;
 }
 
-/** People who changed the assembly since its last accepted decision. */
+/** People who changed the assembly since the revision that was accepted last. Later edits of its draft count. */
 async function contributorsSince(manager: EntityManager, teamId: string, assemblyId: string): Promise<string[]> {
   const rows = await manager.query<{ user_id: string }[]>(
-    `SELECT user_id FROM assembly_contributions WHERE team_id = $1 AND assembly_id = $2 AND last_edited_at > coalesce(
-       (SELECT max(decided_at) FROM decisions WHERE team_id = $1 AND assembly_id = $2
-        AND state IN ('accepted', 'accepted-with-conditions', 'superseded')), '-infinity')`,
+    `SELECT user_id FROM assembly_contributions WHERE team_id = $1 AND assembly_id = $2 AND last_version > coalesce(
+       (SELECT max(r.draft_version) FROM decisions d
+        JOIN revisions r ON r.team_id = d.team_id AND r.id = d.revision_id
+        WHERE d.team_id = $1 AND d.assembly_id = $2
+        AND d.state IN ('accepted', 'accepted-with-conditions', 'superseded')), 0)`,
     [teamId, assemblyId],
   );
   return rows.map((row) => row.user_id);

@@ -4,6 +4,7 @@ import type { Role } from '../../shared/roles.js';
 import type { Session as SessionAnswer } from '../../shared/schemas/session.js';
 import type { Actor, AppContext } from '../context.js';
 import { DomainError, notFound } from '../errors.js';
+import { guarded } from './lockOut.js';
 
 /** Life of an access token, of a session without use, and of a refresh token that another tab has just replaced. */
 export const accessSeconds = 10 * 60;
@@ -64,7 +65,7 @@ interface SessionRow {
 
 /**
  * Changes a refresh token for a new one. Two tabs that come with the same token at once both go on: the second is
- * within the grace. A token used again later was stolen, or its thief was faster: the session ends.
+ * within the grace. Any older token of the session was stolen, or its thief was faster: the session ends.
  *
  * @returns the session, with a new refresh token unless another tab has just made one; null where the token is worth nothing
  */
@@ -92,7 +93,8 @@ export async function rotateRefreshToken(
   if (!row) return null;
   const justReplaced = row.previous_refresh_hash === hash && at.getTime() - row.rotated_at.getTime() <= graceMs;
   if (justReplaced) return { sessionId, refreshToken: null };
-  if (row.previous_refresh_hash === hash) await dataSource.query('DELETE FROM sessions WHERE id = $1', [sessionId]);
+  // Only who once held a token of this session knows its id.
+  await dataSource.query('DELETE FROM sessions WHERE id = $1', [sessionId]);
   return null;
 }
 
@@ -152,20 +154,27 @@ export async function changeTeam({ dataSource }: AppContext, actor: Actor, teamI
   await dataSource.query('UPDATE sessions SET team_id = $2 WHERE id = $1', [actor.sessionId, teamId]);
 }
 
-/** Checks the present password again. @throws DomainError 422 beside the given field */
+/**
+ * Checks the present password again; wrong ones count as they do at sign-in.
+ *
+ * @throws DomainError 422 beside the given field, 429 while the account is locked
+ */
 export async function confirmPassword(
-  { dataSource, workers }: AppContext,
+  context: AppContext,
   actor: Actor,
   password: string,
   path: string,
 ): Promise<void> {
-  const [row] = await dataSource.query<{ password_hash: string }[]>('SELECT password_hash FROM users WHERE id = $1', [
-    actor.userId,
-  ]);
-  if (row && (await workers.checkPassword(password, row.password_hash))) return;
-  throw new DomainError(422, 'wrong-password', 'This is not your password', [
-    { path, message: 'This is not your password' },
-  ]);
+  const fits = await guarded(context, actor.email, async () => {
+    const [row] = await context.dataSource.query<{ password_hash: string }[]>(
+      'SELECT password_hash FROM users WHERE id = $1',
+      [actor.userId],
+    );
+    return row !== undefined && context.workers.checkPassword(password, row.password_hash);
+  });
+  if (fits) return;
+  const message = 'This is not your password';
+  throw new DomainError(422, 'wrong-password', message, [{ path, message }]);
 }
 
 /** Sets a new password and ends every other session of the person. */

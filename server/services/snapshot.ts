@@ -42,7 +42,7 @@ export async function freeze(
     covers,
     engineVersion,
     estimates,
-    redFlags: redFlags(estimates),
+    redFlags: redFlags(estimates, { document: inlined, rules }),
   };
   // Numbers are rounded once, here, and never computed again for the hash.
   const text = canonicalJson(rounded(snapshot));

@@ -128,8 +128,20 @@ export async function inlineDocument(
   const inlined = replaceVersions(document, prefix, errors);
   if (errors.length > 0) throw invalid(errors);
   const parsed = assemblyDocumentSchema.safeParse(inlined);
-  if (!parsed.success) throw invalid(fieldErrors(parsed.error, prefix));
+  if (!parsed.success)
+    throw invalid(asWrongKinds(fieldErrors(parsed.error)).map((e) => ({ ...e, path: prefix + e.path })));
   return parsed.data;
+}
+
+/** The document itself was valid, so what is wrong inside a value is that another kind stands there than is wanted. */
+function asWrongKinds(errors: readonly FieldError[]): FieldError[] {
+  const places = errors.map(({ path, message }) => {
+    const [place, inside] = path.split('/inline');
+    return inside === undefined
+      ? { path, message }
+      : { path: `${place ?? ''}/version`, message: 'This is another kind of value' };
+  });
+  return [...new Map(places.map((entry) => [entry.path, entry])).values()];
 }
 
 /** The rule set that is asked for, or the plain workshop set. */

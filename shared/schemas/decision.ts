@@ -55,7 +55,17 @@ export const decideSchema = z
     conditions: z.array(conditionSchema).max(50).default([]),
     /** Each red flag of the snapshot, with why it is taken. */
     flagsTaken: z
-      .array(z.strictObject({ id: z.string(), reason: z.string().trim().min(3, 'Say why this flag is taken') }))
+      .array(
+        z.strictObject({
+          id: z.string().max(300),
+          reason: z
+            .string()
+            .trim()
+            .min(3, 'Say why this flag is taken')
+            .max(4000, 'A reason must be at most 4000 characters'),
+        }),
+      )
+      .max(1000)
       .default([]),
     /** Needed to accept. */
     password: z.string().max(1000).optional(),

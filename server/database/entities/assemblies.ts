@@ -31,6 +31,13 @@ export class Assembly {
   @Column('uuid', { name: 'request_id', nullable: true })
   requestId!: string | null;
 
+  @ManyToOne(() => Assembly)
+  @JoinColumn([
+    { name: 'team_id', referencedColumnName: 'teamId', foreignKeyConstraintName: 'assemblies_duplicated_from_fk' },
+    { name: 'duplicated_from', referencedColumnName: 'id', foreignKeyConstraintName: 'assemblies_duplicated_from_fk' },
+  ])
+  original?: Relation<Assembly> | null;
+
   @ManyToOne(() => Team)
   @JoinColumn({ name: 'team_id', foreignKeyConstraintName: 'assemblies_team_fk' })
   team?: Relation<Team>;
@@ -86,7 +93,7 @@ export class AssemblyDraft {
   updater?: Relation<User>;
 }
 
-/** Who changed an assembly, and when last: who did is not independent. */
+/** Who changed an assembly, when and in which version of its draft last: who did is not independent. */
 @Entity('assembly_contributions')
 @Index('assembly_contributions_user', ['userId'])
 export class AssemblyContribution {
@@ -101,6 +108,9 @@ export class AssemblyContribution {
 
   @Column('timestamptz', { name: 'last_edited_at' })
   lastEditedAt!: Date;
+
+  @Column('integer', { name: 'last_version' })
+  lastVersion!: number;
 
   @ManyToOne(() => Assembly)
   @JoinColumn([

@@ -13,7 +13,13 @@ const states = `'asked','accepted','accepted-with-conditions','returned','declin
 @Index('decisions_asked_by', ['askedBy'])
 @Index('decisions_decided_by', ['decidedBy'])
 @Index('decisions_request_key', ['teamId', 'askedBy', 'requestId'], { unique: true })
+@Index('decisions_one_waiting', ['teamId', 'assemblyId'], { unique: true, where: `state = 'asked'` })
 @Check('decisions_state_known', `state IN (${states})`)
+@Check('decisions_decided_whole', `(decided_by IS NULL) = (decided_at IS NULL)`)
+@Check(
+  'decisions_decided_by_somebody',
+  `state NOT IN ('accepted','accepted-with-conditions','returned','declined') OR decided_by IS NOT NULL`,
+)
 export class Decision {
   @PrimaryColumn('uuid', { name: 'team_id' })
   teamId!: string;
@@ -91,6 +97,7 @@ export class Decision {
 @Index('decision_events_actor', ['actorId'])
 @Check('decision_events_kind_known', `kind IN (${states})`)
 @Check('decision_events_sequence_positive', 'sequence >= 1')
+@Check('decision_events_snapshot_whole', '(snapshot IS NULL) = (snapshot_sha256 IS NULL)')
 export class DecisionEvent {
   @PrimaryColumn('uuid', { name: 'team_id' })
   teamId!: string;
