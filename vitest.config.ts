@@ -21,6 +21,7 @@ export default defineConfig({
           name: 'api',
           environment: 'node',
           include: ['tests/api/**/*.test.ts', 'tests/faults/**/*.test.ts', 'tests/setup/**/*.test.ts'],
+          globalSetup: ['tests/api/support/global-setup.ts'],
           testTimeout: 60_000,
           hookTimeout: 120_000,
           maxWorkers: 2,
