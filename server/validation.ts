@@ -18,6 +18,24 @@ function nearestBranch(issue: Issue): Issue[] | null {
   return best && depth(best) > 0 && !best.every(({ code }) => code === 'unrecognized_keys') ? best : null;
 }
 
+const kinds: Record<string, string> = {
+  string: 'text',
+  number: 'a number',
+  int: 'a whole number',
+  boolean: 'true or false',
+  array: 'a list',
+  object: 'an object',
+  record: 'an object',
+};
+
+/** The schema’s own message, or where it has none what zod means, as people say it. */
+function inWords(issue: Issue): string {
+  if (!/^Invalid (input|option)/.test(issue.message)) return issue.message;
+  if (issue.code === 'invalid_value') return `This must be one of: ${issue.values.map(String).join(', ')}`;
+  if (issue.code !== 'invalid_type') return issue.message;
+  return issue.input === undefined ? 'This is missing' : `This must be ${kinds[issue.expected] ?? issue.expected}`;
+}
+
 function flatten(
   issues: readonly Issue[],
   base: readonly PropertyKey[],
@@ -29,8 +47,7 @@ function flatten(
     if (issue.code === 'unrecognized_keys') {
       return issue.keys.map((key) => ({ path: [...path, key], message: `There is no field “${key}” here` }));
     }
-    const missing = issue.code === 'invalid_type' && issue.input === undefined;
-    return [{ path, message: missing && /^Invalid input/.test(issue.message) ? 'This is missing' : issue.message }];
+    return [{ path, message: inWords(issue) }];
   });
 }
 

@@ -31,13 +31,23 @@ export async function compileDocument(
   return context.workers.run('compile', { document, rules });
 }
 
-/** The drive ceiling of a network document. The drive stands beside the document in the request. */
+/** Where in a ceiling request an error of the engine stands: the engine sees further limits at the end of the document’s own. */
+function placeInCeilingRequest(path: string, documentLimits: number): string {
+  if (path.startsWith('/drive')) return path;
+  const [, index, rest = ''] = /^\/limits\/(\d+)(.*)$/.exec(path) ?? [];
+  const further = Number(index) - documentLimits;
+  return further >= 0 ? `/limits/${String(further)}${rest}` : `/document${path}`;
+}
+
+/** The drive ceiling of a network document. Drive and further limits stand beside the document in the request. */
 export async function networkCeiling(context: AppContext, request: CeilingRequest): Promise<CeilingAnswer> {
   try {
     return await context.workers.run('ceiling', request);
   } catch (error) {
     if (error instanceof DomainError) {
-      for (const entry of error.errors) if (!entry.path.startsWith('/drive')) entry.path = `/document${entry.path}`;
+      for (const entry of error.errors) {
+        entry.path = placeInCeilingRequest(entry.path, request.document.limits.length);
+      }
     }
     throw error;
   }
