@@ -1,4 +1,3 @@
-import type { DataSource } from 'typeorm';
 import { ConfigError, readConfig, type Config } from './config.js';
 import type { AppContext } from './context.js';
 import { makeDataSource } from './database/data-source.js';
@@ -7,20 +6,21 @@ import { loadDemoTeams } from './database/seeds-demo.js';
 import { loadReferenceValues } from './database/seeds-reference.js';
 import { Workers } from './workers/pool.js';
 
-/** Held while a process migrates, so that two that start at once do so one after the other. */
+/** Held while a process brings a database up to date, so that two that start at once do so one after the other. */
 const migrationLock = '4310, 3';
 
-/** Migrations, grants and reference values, with the owner’s role. */
-async function prepareSchema(owner: DataSource, applicationRole: string): Promise<void> {
-  const runner = owner.createQueryRunner();
+/** The demo teams, made with the application’s role and through its services. */
+async function makeDemo(config: Config): Promise<void> {
+  const dataSource = makeDataSource(config.databaseUrl);
+  await dataSource.initialize();
+  const workers = new Workers();
+  const context: AppContext = { config, dataSource, workers, background: new Set(), now: () => new Date() };
   try {
-    await runner.query(`SELECT pg_advisory_lock(${migrationLock})`);
-    await owner.runMigrations({ transaction: 'all' });
-    await grantToApplication(owner, applicationRole);
-    await loadReferenceValues(owner);
-    await runner.query(`SELECT pg_advisory_unlock(${migrationLock})`);
+    await loadDemoTeams(context);
+    await Promise.all(context.background);
   } finally {
-    await runner.release();
+    await workers.close();
+    await dataSource.destroy();
   }
 }
 
@@ -28,27 +28,17 @@ async function prepareSchema(owner: DataSource, applicationRole: string): Promis
 export async function migrate(config: Config): Promise<void> {
   const owner = makeDataSource(config.ownerUrl);
   await owner.initialize();
+  // Its connection holds the lock; closing it, however this ends, lets go.
+  const runner = owner.createQueryRunner();
   try {
-    await prepareSchema(owner, decodeURIComponent(new URL(config.databaseUrl).username));
+    await runner.query(`SELECT pg_advisory_lock(${migrationLock})`);
+    await owner.runMigrations({ transaction: 'all' });
+    await grantToApplication(owner, decodeURIComponent(new URL(config.databaseUrl).username));
+    await loadReferenceValues(owner);
+    if (config.demo) await makeDemo(config);
   } finally {
+    await runner.release();
     await owner.destroy();
-  }
-  if (!config.demo) return;
-  const dataSource = makeDataSource(config.databaseUrl);
-  await dataSource.initialize();
-  const context: AppContext = {
-    config,
-    dataSource,
-    workers: new Workers(),
-    background: new Set(),
-    now: () => new Date(),
-  };
-  try {
-    await loadDemoTeams(context);
-    await Promise.all(context.background);
-  } finally {
-    await context.workers.close();
-    await dataSource.destroy();
   }
 }
 
