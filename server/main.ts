@@ -47,7 +47,10 @@ async function start(): Promise<void> {
         process.exit(0);
       })();
     });
-    server.closeIdleConnections();
+    // Connections that fall idle after their last answer, too.
+    setInterval(() => {
+      server.closeIdleConnections();
+    }, 50).unref();
   };
   process.on('SIGTERM', stop);
   process.on('SIGINT', stop);
