@@ -24,6 +24,8 @@ export default tseslint.config(
       'no-console': 'error',
     },
   },
+  // The rules for components bring their parser along; it is only for their files.
+  { files: ['**/*.ts'], languageOptions: { parser: tseslint.parser } },
   {
     files: ['**/*.vue'],
     languageOptions: { parserOptions: { parser: tseslint.parser }, globals: globals.browser },

@@ -47,7 +47,7 @@ function operation(route: Route): ZodOpenApiOperationObject {
         : {}),
       '503': problem('A part is down'),
     },
-  } as ZodOpenApiOperationObject;
+  };
 }
 
 /** The OpenAPI 3.1 document, made of the same routes that the router mounts. */

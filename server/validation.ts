@@ -62,16 +62,20 @@ export function fieldErrors(error: z.ZodError, prefix = ''): FieldError[] {
 /** Deeper than any document of ours goes. */
 const mostNested = 64;
 /** NUL and half a surrogate pair: JSON carries them, a database does not keep them. */
-const unkeepable = /\u0000|\p{Surrogate}/u;
+const loneSurrogate = /\p{Surrogate}/u;
+
+function isUnkeepable(text: string): boolean {
+  return text.includes('\0') || loneSurrogate.test(text);
+}
 
 /** Text that cannot be kept and nesting without sense, as errors beside fields; everything else passes. */
 export function unkeepableParts(value: unknown, path = '', depth = 0): FieldError[] {
   if (typeof value === 'string') {
-    return unkeepable.test(value) ? [{ path, message: 'This text holds a character that cannot be kept' }] : [];
+    return isUnkeepable(value) ? [{ path, message: 'This text holds a character that cannot be kept' }] : [];
   }
   if (typeof value !== 'object' || value === null) return [];
   if (depth > mostNested) return [{ path, message: `This is nested more than ${String(mostNested)} levels deep` }];
-  const badKeys = Array.isArray(value) ? [] : Object.keys(value).filter((key) => unkeepable.test(key));
+  const badKeys = Array.isArray(value) ? [] : Object.keys(value).filter(isUnkeepable);
   if (badKeys.length > 0) return [{ path, message: 'A field’s name here holds a character that cannot be kept' }];
   return Object.entries(value).flatMap(([key, entry]) => unkeepableParts(entry, `${path}/${escaped(key)}`, depth + 1));
 }

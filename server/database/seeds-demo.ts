@@ -101,7 +101,7 @@ async function readDemo(context: AppContext, file: string): Promise<Record<strin
       return { version };
     },
   );
-  return assemblyDocumentSchema.parse(resolved) as unknown as Record<string, unknown>;
+  return assemblyDocumentSchema.parse(resolved);
 }
 
 async function makeAssembly(context: AppContext, actor: Actor, file: string, requestId: string): Promise<Assembly> {

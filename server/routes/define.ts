@@ -49,7 +49,7 @@ export function defineRoute<
   Q extends z.ZodType | undefined = undefined,
   B extends z.ZodType | undefined = undefined,
 >(route: Route<P, Q, B>): Route {
-  return route as unknown as Route;
+  return route;
 }
 
 function parse(schema: z.ZodType | undefined, value: unknown): unknown {
@@ -92,7 +92,7 @@ export function mountRoutes(router: Router, routes: readonly Route[], context: A
         body: parse(route.body, request.body as unknown),
       };
       response.locals.input = input;
-      const answer = await route.handle({ context, actor, input: input as never, request, response });
+      const answer = await route.handle({ context, actor, input: input, request, response });
       if (response.headersSent) return;
       if (answer === undefined) response.status(route.answers.status).end();
       else response.status(route.answers.status).json(answer);

@@ -1,5 +1,5 @@
 import type { AssemblyDocument } from '../../shared/schemas/assembly.js';
-import { coversSchema, snapshotSchema } from '../../shared/schemas/decision.js';
+import { type coversSchema, snapshotSchema } from '../../shared/schemas/decision.js';
 import type { Estimate, Verdict } from '../../shared/schemas/estimate.js';
 import type { z } from 'zod';
 import type { AppContext } from '../context.js';

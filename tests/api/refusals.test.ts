@@ -1,6 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { z } from 'zod';
+import { type z } from 'zod';
 import type { Assembly } from '../../shared/schemas/assembly-records.js';
 import { allRoutes } from '../../server/routes/all.js';
 import { changed, demoDocument, type Json } from './support/documents.js';

@@ -53,7 +53,7 @@ describe('the entities', () => {
   });
 
   it('leave no team open: team_id is never null', async () => {
-    const nullable = await server.owner.query(
+    const nullable = await server.owner.query<unknown[]>(
       `SELECT table_name FROM information_schema.columns
        WHERE table_schema = 'public' AND column_name = 'team_id' AND is_nullable = 'YES'`,
     );
@@ -70,7 +70,7 @@ describe('the migrations', () => {
       for (let round = 0; round < 2; round++) {
         await fresh.runMigrations({ transaction: 'all' });
         expect((await fresh.driver.createSchemaBuilder().log()).upQueries).toEqual([]);
-        for (const _ of migrations) await fresh.undoLastMigration({ transaction: 'all' });
+        for (let i = 0; i < migrations.length; i++) await fresh.undoLastMigration({ transaction: 'all' });
         const left = await fresh.query<{ tablename: string }[]>(
           `SELECT tablename FROM pg_tables WHERE schemaname = 'public'`,
         );
