@@ -1,4 +1,4 @@
-import { SetupError } from './fail.mjs';
+import { SetupError, tellingLine } from './fail.mjs';
 import { run } from './run.mjs';
 
 /** True when this process may install Debian’s packages. */
@@ -17,12 +17,8 @@ export async function aptInstall(name, what) {
   console.log(`Installing ${name} …`);
   const env = { DEBIAN_FRONTEND: 'noninteractive' };
   await run('apt-get', ['update'], { quiet: true, env });
-  const { code, output } = await run('apt-get', ['install', '-y', '--no-install-recommends', name], {
-    quiet: true,
-    env,
-  });
+  const options = ['-y', '--no-install-recommends', '-o', 'DPkg::Lock::Timeout=120'];
+  const { code, output } = await run('apt-get', ['install', ...options, name], { quiet: true, env });
   if (code !== 0)
-    throw new SetupError(
-      `${what} is missing and could not be installed (${line}):\n${output.trim().split('\n').at(-1)}`,
-    );
+    throw new SetupError(`${what} is missing and could not be installed (${line}): ${tellingLine(output)}`);
 }

@@ -1,20 +1,22 @@
 import { createHash } from 'node:crypto';
-import { existsSync, mkdirSync, readFileSync, readdirSync, statSync, writeFileSync } from 'node:fs';
+import { existsSync, readFileSync, readdirSync, rmSync, statSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
 import { SetupError } from './fail.mjs';
-import { root } from './paths.mjs';
+import { packaged, root } from './paths.mjs';
 import { run } from './run.mjs';
 
 const builds = {
   client: {
     inputs: ['src', 'shared', 'index.html', 'vite.config.ts', 'package-lock.json'],
-    command: ['npx', ['--no-install', 'vite', 'build', '--logLevel', 'warn']],
-    output: 'dist/client/index.html',
+    command: ['vite', ['build', '--logLevel', 'warn']],
+    outputs: ['dist/client'],
+    entry: 'dist/client/index.html',
   },
   server: {
     inputs: ['server', 'shared', 'tsconfig.json', 'tsconfig.build.json', 'package-lock.json'],
-    command: ['npx', ['--no-install', 'tsc', '-p', 'tsconfig.build.json']],
-    output: 'dist/server/main.js',
+    command: ['tsc', ['-p', 'tsconfig.build.json']],
+    outputs: ['dist/server', 'dist/shared'],
+    entry: 'dist/server/main.js',
   },
 };
 
@@ -29,17 +31,19 @@ function addFile(hash, file) {
 /** Builds the client and the server where their inputs have changed since the last build. */
 export async function ensureBuilt(which = ['server', 'client']) {
   for (const name of which) {
-    const { inputs, command, output } = builds[name];
+    const { inputs, command, outputs, entry } = builds[name];
     const hash = createHash('sha256');
     for (const input of inputs) addFile(hash, path.join(root, input));
     const digest = hash.digest('hex');
     const stamp = path.join(root, 'dist', `.${name}-inputs`);
-    const fresh = existsSync(stamp) && readFileSync(stamp, 'utf8') === digest && existsSync(path.join(root, output));
+    const fresh = existsSync(stamp) && readFileSync(stamp, 'utf8') === digest && existsSync(path.join(root, entry));
     if (fresh) continue;
     console.log(`Building the ${name} …`);
-    const result = await run(command[0], command[1], { quiet: true });
+    // Without its stamp a build that is broken off is made again.
+    for (const old of [stamp, ...outputs.map((output) => path.join(root, output))])
+      rmSync(old, { recursive: true, force: true });
+    const result = await run(packaged(command[0]), command[1], { quiet: true, env: { NODE_ENV: 'production' } });
     if (result.code !== 0) throw new SetupError(`The ${name} could not be built:\n${result.output.trim()}`);
-    mkdirSync(path.dirname(stamp), { recursive: true });
     writeFileSync(stamp, digest);
   }
 }

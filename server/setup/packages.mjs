@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto';
 import { existsSync, readFileSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
-import { SetupError } from './fail.mjs';
+import { SetupError, tellingLine } from './fail.mjs';
 import { root } from './paths.mjs';
 import { run } from './run.mjs';
 
@@ -18,7 +18,9 @@ export async function ensurePackages() {
   const hash = lockHash();
   if (existsSync(stamp) && readFileSync(stamp, 'utf8') === hash) return;
   console.log('Installing packages …');
-  const { code, output } = await run('npm', ['ci', '--engine-strict', '--no-audit', '--no-fund'], { quiet: true });
-  if (code !== 0) throw new SetupError(`npm ci failed:\n${output.trim()}`);
+  // The client is built here, so the packages for development are needed in production too.
+  const args = ['ci', '--include=dev', '--engine-strict', '--no-audit', '--no-fund'];
+  const { code, output } = await run('npm', args, { quiet: true });
+  if (code !== 0) throw new SetupError(`The packages could not be installed (npm ci): ${tellingLine(output)}`);
   writeFileSync(stamp, hash);
 }

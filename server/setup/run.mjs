@@ -1,6 +1,13 @@
 import { spawn } from 'node:child_process';
 import { root } from './paths.mjs';
 
+const running = new Set();
+
+/** Ends every command that `run` has under way. */
+export function endRunning() {
+  for (const child of running) child.kill('SIGTERM');
+}
+
 /**
  * Runs a command to its end.
  *
@@ -20,11 +27,16 @@ export function run(command, args, options = {}) {
         options.quiet ? 'pipe' : 'inherit',
       ],
     });
+    running.add(child);
+    const end = (result) => {
+      running.delete(child);
+      resolve(result);
+    };
     let output = '';
     child.stdout?.on('data', (data) => (output += data));
     child.stderr?.on('data', (data) => (output += data));
-    child.on('error', (error) => resolve({ code: 127, output: error.message }));
-    child.on('close', (code) => resolve({ code: code ?? 1, output }));
+    child.on('error', (error) => end({ code: 127, output: error.message }));
+    child.on('close', (code) => end({ code: code ?? 1, output }));
     if (options.input !== undefined) child.stdin?.end(options.input);
   });
 }

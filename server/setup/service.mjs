@@ -1,19 +1,30 @@
 import { spawn } from 'node:child_process';
-import { existsSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { rmSync } from 'node:fs';
 import net from 'node:net';
 import path from 'node:path';
 import { SetupError } from './fail.mjs';
 import { root } from './paths.mjs';
+import { noteProcess } from './processes.mjs';
 import { run } from './run.mjs';
 
+/** Longest that a service may take to end before it is killed [ms]. */
+const patienceMs = 15_000;
+
+/** @throws SetupError where the setting is no port number */
+export function readPort(name, otherwise) {
+  const port = Number(process.env[name] || otherwise);
+  if (Number.isInteger(port) && port >= 1 && port <= 65535) return port;
+  throw new SetupError(`${name} must be a port number, not “${process.env[name]}”`);
+}
+
 /** @throws SetupError where something listens on the port already */
-export function checkPortFree(port) {
+export function checkPortFree(port, setting = 'PORT') {
   return new Promise((resolve, reject) => {
     const server = net.createServer();
     server.on('error', (error) => {
       const said =
         error.code === 'EADDRINUSE'
-          ? `Port ${port} is in use. Stop what uses it, or choose another: PORT=${port + 1} npm start`
+          ? `Port ${port} is in use. Stop what uses it, or choose another with ${setting}=…`
           : `Port ${port} cannot be used: ${error.message}`;
       reject(new SetupError(said));
     });
@@ -21,32 +32,20 @@ export function checkPortFree(port) {
   });
 }
 
-/** Ends a server that an earlier, killed start of the same home left running. */
-export async function endLeftover(home) {
-  const file = path.join(home, 'server.pid');
-  if (!existsSync(file)) return;
-  const pid = Number(readFileSync(file, 'utf8'));
-  const commandLine = `/proc/${pid}/cmdline`;
-  if (existsSync(commandLine) && readFileSync(commandLine, 'utf8').includes(path.join('dist', 'server', 'main.js'))) {
-    console.log('Ending a server that an earlier start left running …');
-    process.kill(pid, 'SIGTERM');
-    for (let i = 0; i < 100 && existsSync(commandLine); i++) await new Promise((resolve) => setTimeout(resolve, 100));
-  }
-  rmSync(file, { force: true });
-}
-
 /** Migrates, grants and loads what belongs in the database. */
-export async function migrate(env) {
-  const { code, output } = await run(process.execPath, [path.join(root, 'dist/server/migrate.js')], {
-    env,
-    quiet: true,
-  });
-  if (code !== 0) throw new SetupError(output.trim() || 'The database could not be migrated');
+export async function migrate(env, command = [process.execPath, path.join(root, 'dist/server/migrate.js')]) {
+  const { code, output } = await run(command[0], command.slice(1), { env, quiet: true });
+  if (code !== 0) {
+    throw new SetupError(output.trim().replace(/^trimwick: /, '') || 'The database could not be migrated');
+  }
 }
 
-/**
- * A long-running child of this script, in a process group of its own, so that Ctrl-C reaches it only through `stop`.
- */
+/** The built web process, as `npm start` and the browser tests run it. */
+export function webProcess(env, pidFile) {
+  return new Service(process.execPath, [path.join(root, 'dist/server/main.js')], env, pidFile);
+}
+
+/** A long-running child of this script, in a process group of its own, so that Ctrl-C reaches it only through `stop`. */
 export class Service {
   constructor(command, args, env, pidFile) {
     this.child = spawn(command, args, {
@@ -56,7 +55,8 @@ export class Service {
       detached: true,
     });
     this.pidFile = pidFile;
-    if (pidFile && this.child.pid) writeFileSync(pidFile, String(this.child.pid));
+    this.over = false;
+    if (pidFile && this.child.pid) noteProcess(pidFile, this.child.pid);
     this.ended = new Promise((resolve) => {
       this.child.on('error', (error) => resolve({ code: 1, error }));
       this.child.on('exit', (code, signal) => resolve({ code: code ?? (signal ? 1 : 0) }));
@@ -64,10 +64,18 @@ export class Service {
     void this.ended.then(() => (this.over = true));
   }
 
+  signal(name) {
+    try {
+      process.kill(-this.child.pid, name);
+    } catch (error) {
+      if (error.code !== 'ESRCH') throw error;
+    }
+  }
+
   async stop() {
-    if (!this.over) {
-      this.child.kill('SIGTERM');
-      const timer = setTimeout(() => this.child.kill('SIGKILL'), 15_000);
+    if (!this.over && this.child.pid) {
+      this.signal('SIGTERM');
+      const timer = setTimeout(() => this.signal('SIGKILL'), patienceMs);
       await this.ended;
       clearTimeout(timer);
     }
@@ -93,11 +101,12 @@ export async function waitHealthy(port, service, seconds = 60) {
   throw new SetupError(`The server did not become healthy within ${seconds} s${said ? `: ${said}` : ''}`);
 }
 
-/** Resolves at the first Ctrl-C or SIGTERM. */
+/**
+ * Resolves at the first Ctrl-C, SIGTERM or hang-up. Later ones change nothing: a terminal and npm both pass on the same
+ * Ctrl-C, and the database must still be stopped.
+ */
 export function stopRequested() {
   return new Promise((resolve) => {
-    process.once('SIGINT', () => resolve('SIGINT'));
-    process.once('SIGTERM', () => resolve('SIGTERM'));
-    process.once('SIGHUP', () => resolve('SIGHUP'));
+    for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => resolve(signal));
   });
 }

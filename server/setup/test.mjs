@@ -1,14 +1,16 @@
-import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import { chmodSync, mkdtempSync, readFileSync, rmSync } from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
-import { chmodSync } from 'node:fs';
 import { ensureBrowser } from './browser.mjs';
 import { ensureBuilt } from './build.mjs';
-import { runScript } from './fail.mjs';
+import { told } from './fail.mjs';
 import { checkNode } from './node-version.mjs';
 import { ensurePackages } from './packages.mjs';
+import { packaged } from './paths.mjs';
 import { PrivateCluster } from './postgres.mjs';
-import { run } from './run.mjs';
+import { noteProcess } from './processes.mjs';
+import { endRunning, run } from './run.mjs';
+import { sweepAbandoned, testFolderPrefix } from './throw-away.mjs';
 
 /** Checks beside the tests proper; each counts as one. */
 const gates = {
@@ -20,11 +22,41 @@ const gates = {
 };
 const projects = ['engine', 'reference', 'client', 'api', 'browser'];
 
+/** What a person has set for running the program must not reach its tests. */
+const neutral = Object.fromEntries(
+  ['DATABASE_URL', 'DATABASE_OWNER_URL', 'PORT', 'HOST', 'NODE_ENV', 'SESSION_KEY', 'LOG_LEVEL']
+    .concat(['TRIMWICK_HOME', 'TRIMWICK_DEMO', 'TRIMWICK_TEST_URL'])
+    .map((name) => [name, undefined]),
+);
+
+let passed = 0;
+let failed = 0;
+function count(fine) {
+  if (fine) passed++;
+  else failed++;
+}
+
+/** Does a step of the way; what goes wrong counts as a failure, and the rest of the checks is made all the same. */
+async function attempt(step) {
+  try {
+    return await step();
+  } catch (error) {
+    failed++;
+    console.error(told(error));
+    return undefined;
+  }
+}
+
 /** `npm test`, or `npm test -- --only api,browser [file …]` for some of it. */
 function readArguments(args) {
   const at = args.indexOf('--only');
   if (at < 0) return { gates: Object.keys(gates), projects, files: args };
   const wanted = (args[at + 1] ?? '').split(',');
+  const unknown = wanted.filter((name) => !(name in gates) && !projects.includes(name));
+  if (unknown.length > 0) {
+    console.error(`--only knows ${[...Object.keys(gates), ...projects].join(', ')}, not “${unknown.join(', ')}”`);
+    process.exit(1);
+  }
   return {
     gates: Object.keys(gates).filter((name) => wanted.includes(name)),
     projects: projects.filter((name) => wanted.includes(name)),
@@ -35,70 +67,82 @@ function readArguments(args) {
 async function runGate(name) {
   const [command, args] = gates[name];
   const began = Date.now();
-  const { code, output } = await run('npx', ['--no-install', command, ...args], { quiet: true });
+  const { code, output } = await run(packaged(command), args, { quiet: true, env: neutral });
   const seconds = ((Date.now() - began) / 1000).toFixed(1);
   console.log(code === 0 ? `✓ ${name} (${seconds} s)` : `✗ ${name} (${seconds} s)\n${output.trim()}`);
-  return code === 0;
+  count(code === 0);
 }
 
-async function runProject(name, files, env, folder) {
-  const report = path.join(folder, `${name}.json`);
+async function runProjects(names, files, env, folder) {
+  const report = path.join(folder, `${names.join('-')}.json`);
   const { code } = await run(
-    'npx',
+    packaged('vitest'),
     [
-      ...['--no-install', 'vitest', 'run', '--project', name, ...files],
+      ...['run', ...names.flatMap((name) => ['--project', name]), ...files],
       ...['--reporter=default', '--reporter=json', `--outputFile.json=${report}`],
     ],
-    { env },
+    { env: { ...neutral, ...env } },
   );
-  try {
-    const { numPassedTests, numFailedTests } = JSON.parse(readFileSync(report, 'utf8'));
-    // A file that does not even load has no tests to count.
-    return { passed: numPassedTests, failed: code === 0 ? numFailedTests : Math.max(numFailedTests, 1) };
-  } catch {
-    return { passed: 0, failed: 1 };
-  }
+  const { numPassedTests, numFailedTests } = JSON.parse(readFileSync(report, 'utf8'));
+  passed += numPassedTests;
+  // A file that does not even load has no tests to count.
+  failed += code === 0 ? numFailedTests : Math.max(numFailedTests, 1);
 }
 
-await runScript(async () => {
+/** A cluster, a build and, where they are looked at, a browser; undefined where one of them cannot be had. */
+async function prepareServed(names, cluster) {
+  await cluster.start();
+  const env = { TEST_DATABASE_OWNER_URL: cluster.ownerUrl, TEST_DATABASE_URL: cluster.applicationUrl };
+  await ensureBuilt();
+  if (names.includes('browser')) env.CHROMIUM_PATH = await ensureBrowser();
+  return env;
+}
+
+async function runAll(chosen, cluster, folder) {
+  // Two at a time: that is what two cores bear.
+  for (let i = 0; i < chosen.gates.length; i += 2) await Promise.all(chosen.gates.slice(i, i + 2).map(runGate));
+  const served = chosen.projects.filter((name) => name === 'api' || name === 'browser');
+  const alone = chosen.projects.filter((name) => !served.includes(name));
+  const env = { TRIMWICK_TEST_FOLDER: folder };
+  if (alone.length > 0) await attempt(() => runProjects(alone, chosen.files, env, folder));
+  if (served.length === 0) return;
+  const more = await attempt(() => prepareServed(served, cluster));
+  if (!more) return;
+  for (const name of served) await attempt(() => runProjects([name], chosen.files, { ...env, ...more }, folder));
+}
+
+const chosen = readArguments(process.argv.slice(2));
+await attempt(async () => {
   checkNode();
   await ensurePackages();
-  const chosen = readArguments(process.argv.slice(2));
-  const folder = mkdtempSync(path.join(os.tmpdir(), 'trimwick-test-'));
+  await sweepAbandoned();
+  const folder = mkdtempSync(path.join(os.tmpdir(), testFolderPrefix));
   // The database server’s account must be able to enter it.
   chmodSync(folder, 0o755);
-  let passed = 0;
-  let failed = 0;
-  const needsDatabase = chosen.projects.some((name) => name === 'api' || name === 'browser');
-  const cluster = needsDatabase ? new PrivateCluster(path.join(folder, 'home'), { throwAway: true }) : null;
-  try {
-    const env = { TRIMWICK_TEST_FOLDER: folder };
-    if (chosen.projects.includes('browser')) env.CHROMIUM_PATH = await ensureBrowser();
-    // Two at a time: that is what two cores bear.
-    for (let i = 0; i < chosen.gates.length; i += 2) {
-      for (const fine of await Promise.all(chosen.gates.slice(i, i + 2).map(runGate))) {
-        if (fine) passed++;
-        else failed++;
-      }
-    }
-    if (cluster) {
-      await cluster.start();
-      env.TEST_DATABASE_OWNER_URL = cluster.ownerUrl;
-      env.TEST_DATABASE_URL = cluster.applicationUrl;
-    }
-    if (needsDatabase) await ensureBuilt();
-    for (const name of chosen.projects) {
-      const counts = await runProject(name, chosen.files, env, folder);
-      passed += counts.passed;
-      failed += counts.failed;
-    }
-  } catch (error) {
-    failed++;
-    console.error(error instanceof Error ? error.message : error);
-  } finally {
-    await cluster?.remove();
+  noteProcess(path.join(folder, 'test.pid'), process.pid);
+  const cluster = new PrivateCluster(path.join(folder, 'home'), { throwAway: true });
+  const cleanUp = async () => {
+    await cluster.remove();
     rmSync(folder, { recursive: true, force: true });
+  };
+  let stopping = false;
+  for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) {
+    process.on(signal, () => {
+      if (stopping) return;
+      stopping = true;
+      endRunning();
+      void cleanUp().finally(() => process.exit(1));
+    });
   }
-  console.log(`${passed} passed, ${failed} failed`);
-  if (failed > 0) process.exitCode = 1;
+  try {
+    await runAll(chosen, cluster, folder);
+  } finally {
+    if (!stopping) await cleanUp();
+  }
 });
+if (passed + failed === 0) {
+  failed++;
+  console.error('No check was made: no test file matches');
+}
+console.log(`${passed} passed, ${failed} failed`);
+if (failed > 0) process.exitCode = 1;
