@@ -14,6 +14,7 @@ import {
   type SummaryRow,
 } from './assemblyRows.js';
 import { refreshVerdict } from './computeVerdict.js';
+import { containing, orderBy, pageOf } from './listing.js';
 
 const sortColumns: Record<string, string> = {
   name: 'lower(a.name)',
@@ -31,18 +32,16 @@ export async function listAssemblies(
   actor: Actor,
   query: ListQuery & { archived?: boolean | undefined },
 ): Promise<{ items: AssemblySummary[]; total: number; page: number }> {
+  const order = orderBy(query.sort, sortColumns, '-updatedAt');
   const parameters: unknown[] = [actor.teamId];
   let where = `${summaryFrom} AND a.archived_at IS ${query.archived ? 'NOT NULL' : 'NULL'}`;
   if (query.search) {
-    parameters.push(`%${query.search.replace(/[\\%_]/g, '\\$&')}%`);
+    parameters.push(containing(query.search));
     where += ` AND (a.name ILIKE $2 OR cu.name ILIKE $2 OR uu.name ILIKE $2 OR d.verdict->>'bindsLabel' ILIKE $2)`;
   }
   const [{ count }] = await context.dataSource.query<[{ count: string }]>(`SELECT count(*) ${where}`, parameters);
-  const descending = query.sort === undefined || query.sort.startsWith('-');
-  const column = sortColumns[query.sort?.replace(/^-/, '') ?? 'updatedAt'] ?? 'd.updated_at';
   const rows = await context.dataSource.query<SummaryRow[]>(
-    `SELECT ${summaryColumns} ${where} ORDER BY ${column} ${descending ? 'DESC' : 'ASC'} NULLS LAST, a.id
-     LIMIT ${String(query.pageSize)} OFFSET ${String((query.page - 1) * query.pageSize)}`,
+    `SELECT ${summaryColumns} ${where} ${order}, a.id ${pageOf(query)}`,
     parameters,
   );
   for (const row of rows.filter(verdictIsOld)) inBackground(context, refreshVerdict(context, actor.teamId, row.id));

@@ -4,6 +4,7 @@ import type { ListQuery } from '../../shared/schemas/list.js';
 import type { Actor, AppContext } from '../context.js';
 import { notFound } from '../errors.js';
 import { mayDecide } from '../policies/independence.js';
+import { containing, orderBy, pageOf } from './listing.js';
 import { readSnapshot } from './snapshot.js';
 
 interface DecisionRow {
@@ -71,6 +72,7 @@ export async function listDecisions(
   actor: Actor,
   query: ListQuery & { state?: string | undefined },
 ): Promise<{ items: DecisionSummary[]; total: number; page: number }> {
+  const order = orderBy(query.sort, sortColumns, '-number');
   const parameters: unknown[] = [actor.teamId];
   let where = from;
   if (query.state) {
@@ -78,17 +80,14 @@ export async function listDecisions(
     where += ` AND d.state = $${String(parameters.length)}`;
   }
   if (query.search) {
-    parameters.push(`%${query.search.replace(/[\\%_]/g, '\\$&')}%`);
+    parameters.push(containing(query.search));
     const p = `$${String(parameters.length)}`;
     where += ` AND (a.name ILIKE ${p} OR d.outline->>'binds' ILIKE ${p} OR d.statement ILIKE ${p}
       OR au.name ILIKE ${p} OR du.name ILIKE ${p} OR d.number::text ILIKE ${p})`;
   }
   const [{ count }] = await dataSource.query<[{ count: string }]>(`SELECT count(*) ${where}`, parameters);
-  const descending = query.sort === undefined || query.sort.startsWith('-');
-  const column = sortColumns[query.sort?.replace(/^-/, '') ?? 'number'] ?? 'd.number';
   const rows = await dataSource.query<DecisionRow[]>(
-    `SELECT ${columns} ${where} ORDER BY ${column} ${descending ? 'DESC' : 'ASC'} NULLS LAST, d.number DESC
-     LIMIT ${String(query.pageSize)} OFFSET ${String((query.page - 1) * query.pageSize)}`,
+    `SELECT ${columns} ${where} ${order}, d.number DESC ${pageOf(query)}`,
     parameters,
   );
   return { items: rows.map(present), total: Number(count), page: query.page };

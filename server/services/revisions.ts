@@ -80,6 +80,25 @@ export async function insertRevision(
   return { id, number };
 }
 
+/** The revision that an earlier press of the same button has made. The draft’s row is locked by it. */
+async function sameRevision(
+  manager: EntityManager,
+  actor: Actor,
+  assemblyId: string,
+  input: { expectedVersion: number; note: string },
+): Promise<{ number: number } | undefined> {
+  await manager.query('SELECT 1 FROM assembly_drafts WHERE team_id = $1 AND assembly_id = $2 FOR UPDATE', [
+    actor.teamId,
+    assemblyId,
+  ]);
+  const [row] = await manager.query<{ number: number }[]>(
+    `SELECT number FROM revisions
+     WHERE team_id = $1 AND assembly_id = $2 AND draft_version = $3 AND note = $4 AND created_by = $5`,
+    [actor.teamId, assemblyId, input.expectedVersion, input.note, actor.userId],
+  );
+  return row;
+}
+
 /** Freezes the draft as the next revision, after a whole estimate has shown that it can be computed. */
 export async function createRevision(
   context: AppContext,
@@ -94,8 +113,10 @@ export async function createRevision(
     document: await inlineDocument(context, finishedDocument(draft.document)),
     rules,
   });
-  const made = await context.dataSource.transaction((manager) =>
-    insertRevision(manager, actor, context.now(), { assemblyId, ...input }),
+  const made = await context.dataSource.transaction(
+    async (manager) =>
+      (await sameRevision(manager, actor, assemblyId, input)) ??
+      insertRevision(manager, actor, context.now(), { assemblyId, ...input }),
   );
   if (!made) throw await draftConflict(context, actor, assemblyId);
   return getRevision(context, actor, assemblyId, made.number);

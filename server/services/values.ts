@@ -6,6 +6,7 @@ import type { AppContext } from '../context.js';
 import { invalid, notFound } from '../errors.js';
 import type { FieldError } from '../engine/errors.js';
 import { fieldErrors } from '../validation.js';
+import { containing, orderBy, pageOf } from './listing.js';
 
 export type ValueKind = 'material' | 'finish' | 'part-type' | 'rule-set';
 
@@ -38,19 +39,16 @@ export async function listValues(
   kind: ValueKind,
   query: ListQuery,
 ): Promise<{ items: ValueRow[]; total: number; page: number }> {
+  const order = orderBy(query.sort, sortColumns, 'name');
   const parameters: unknown[] = [kind];
   let where = newest;
   if (query.search) {
-    parameters.push(`%${query.search.replace(/[\\%_]/g, '\\$&')}%`);
+    parameters.push(containing(query.search));
     where += ` AND (n.name ILIKE $2 OR v.slug ILIKE $2 OR n.content->>'group' ILIKE $2 OR n.content->>'class' ILIKE $2)`;
   }
   const [{ count }] = await dataSource.query<[{ count: string }]>(`SELECT count(*) ${where}`, parameters);
-  const descending = query.sort?.startsWith('-') ?? false;
-  const column = sortColumns[query.sort?.replace(/^-/, '') ?? 'name'] ?? sortColumns.name;
   const items = await dataSource.query<Omit<ValueRow, 'origin'>[]>(
-    `SELECT v.id, n.id AS version, n.number, n.content ${where}
-     ORDER BY ${column ?? 'v.slug'} ${descending ? 'DESC' : 'ASC'}, v.slug
-     LIMIT ${String(query.pageSize)} OFFSET ${String((query.page - 1) * query.pageSize)}`,
+    `SELECT v.id, n.id AS version, n.number, n.content ${where} ${order}, v.slug ${pageOf(query)}`,
     parameters,
   );
   return { items: items.map((item) => ({ ...item, origin: 'reference' })), total: Number(count), page: query.page };

@@ -177,6 +177,17 @@ describe('a revision', () => {
     expect((await read(made.id)).draftAhead).toBe(true);
   });
 
+  it('made by two presses of one button is one', async () => {
+    const made = await make();
+    const body = { expectedVersion: 1, note: 'pressed twice' };
+    const path = `${address}/${made.id}/revisions`;
+    const answers = await Promise.all([engineer.post(path, body), engineer.post(path, body)]);
+    expect(answers.map(({ status }) => status)).toEqual([201, 201]);
+    expect((await read(made.id)).revisions).toHaveLength(1);
+    await engineer.post(path, { ...body, note: 'meant' });
+    expect((await read(made.id)).revisions).toHaveLength(2);
+  });
+
   it('is refused for an unfinished draft, with the paths, and for one that has moved', async () => {
     const made = await make(changed(demoDocument(), '/housing/faces/top/wallM', 0));
     const unfinished = await engineer.post(`${address}/${made.id}/revisions`, { expectedVersion: 1 });
