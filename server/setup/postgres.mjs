@@ -65,6 +65,7 @@ function worksIn(pid, folder) {
   }
 }
 
+/** @returns {Promise<number>} a port of 127.0.0.1 that nothing listens on */
 export function freePort() {
   return new Promise((resolve, reject) => {
     const server = net.createServer();

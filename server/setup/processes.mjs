@@ -25,7 +25,11 @@ export function noteProcess(file, pid, more = {}) {
   writeFileSync(file, JSON.stringify({ pid, began: beginning(pid), ...more }));
 }
 
-/** What a file notes, where that process still runs. */
+/**
+ * What a file notes, where that process still runs.
+ *
+ * @returns {{ pid: number, began: string, port?: number } | undefined}
+ */
 export function notedProcess(file) {
   if (!existsSync(file)) return undefined;
   try {

@@ -78,7 +78,7 @@ export async function request<T>(
   }
   if (response.status === 401 && problem.code === 'not-signed-in')
     for (const listener of signedOutListeners) listener();
-  throw new ApiError(response.status, problem as Problem & Record<string, unknown>);
+  throw new ApiError(response.status, problem);
 }
 
 /** A query string of what is defined. */
