@@ -78,7 +78,7 @@ describe('the migrations', () => {
       }
     } finally {
       await fresh.destroy();
-      await adminQuery(`DROP DATABASE ${name} WITH (FORCE)`);
+      await adminQuery(`DROP DATABASE ${name}`);
     }
   });
 
@@ -103,7 +103,7 @@ describe('the migrations', () => {
       expect(await count('decision_events')).toBe(2);
       await owner.destroy();
     } finally {
-      await adminQuery(`DROP DATABASE ${name} WITH (FORCE)`);
+      await adminQuery(`DROP DATABASE ${name}`);
     }
   });
 });

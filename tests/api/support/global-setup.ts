@@ -31,6 +31,6 @@ export default async function setup(project: TestProject): Promise<(() => Promis
   );
   project.provide('templateDatabase', template);
   return async () => {
-    await adminQuery(`DROP DATABASE IF EXISTS ${template} WITH (FORCE)`);
+    await adminQuery(`DROP DATABASE IF EXISTS ${template}`);
   };
 }

@@ -96,6 +96,7 @@ export class TestServer {
     await this.context.workers.close();
     await this.context.dataSource.destroy();
     await this.owner.destroy();
-    await adminQuery(`DROP DATABASE ${this.database} WITH (FORCE)`);
+    // PostgreSQL waits some seconds by itself for the connections that are just closing.
+    await adminQuery(`DROP DATABASE ${this.database}`);
   }
 }
