@@ -1,5 +1,5 @@
-import { AxeBuilder } from '@axe-core/playwright';
 import { afterAll, beforeAll, beforeEach, describe, expect, test } from 'vitest';
+import { violationsOf } from './harness/axe.js';
 import { openAs, type Person } from './people.js';
 import { draftOnServer, makeLantern, saved, verdictHolds } from './sheet-helpers.js';
 
@@ -169,10 +169,7 @@ describe('for everybody', () => {
       ];
       for (const opener of openers) {
         await opener?.click();
-        const { violations } = await new AxeBuilder({ page }).analyze();
-        expect(
-          violations.map(({ id, nodes }) => `${id}: ${nodes.map(({ target }) => target.join(' ')).join(', ')}`),
-        ).toEqual([]);
+        expect(await violationsOf(page)).toEqual([]);
       }
       await page.emulateMedia({ colorScheme: 'light' });
     },
