@@ -6,10 +6,14 @@ import os from 'node:os';
 import path from 'node:path';
 import { fileURLToPath } from 'node:url';
 import pg from 'pg';
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { freePort } from '../../server/setup/postgres.mjs';
+import { beginning } from '../../server/setup/processes.mjs';
 
 const root = fileURLToPath(new URL('../..', import.meta.url));
+
+/** Every start of a test: none outlives it. */
+const starts: Start[] = [];
 
 /** A start of the program in a home of its own, as a person’s terminal sees it. */
 class Start {
@@ -26,6 +30,7 @@ class Start {
     });
     for (const stream of [this.child.stdout, this.child.stderr])
       stream?.on('data', (chunk: Buffer) => (this.output += chunk.toString()));
+    starts.push(this);
     this.ended = once(this.child, 'close').then(([code]) => code as number | null);
   }
 
@@ -61,7 +66,8 @@ const listens = (port: number) =>
     (answer) => answer.ok,
     () => false,
   );
-const isAlive = (pid: number) => existsSync(`/proc/${String(pid)}`);
+/** Waits until none of the processes is left. */
+const gone = (...pids: number[]) => expect.poll(() => pids.filter((pid) => beginning(pid) !== undefined)).toEqual([]);
 
 let folder: string;
 let home: string;
@@ -79,6 +85,12 @@ beforeAll(async () => {
   home = path.join(folder, 'home');
   port = await freePort();
   settings = { PORT: String(port), TRIMWICK_HOME: home };
+});
+afterEach(async () => {
+  for (const start of starts.splice(0)) {
+    if (start.child.exitCode === null && start.child.signalCode === null) start.signal('SIGTERM');
+    await start.end();
+  }
 });
 afterAll(() => {
   rmSync(folder, { recursive: true, force: true });
@@ -111,7 +123,7 @@ describe('npm start', () => {
     start.signal('SIGINT');
     start.signal('SIGINT');
     expect(await start.end()).toBe(0);
-    expect([isAlive(server), isAlive(database)]).toEqual([false, false]);
+    await gone(server, database);
   });
 
   it('takes up its database again, keeps secrets to its own account, and asks for a password on loopback too', async () => {
@@ -152,11 +164,11 @@ describe('npm start', () => {
     const start = new Start(settings);
     await start.serving();
     expect(start.output).toContain('Ending a server that an earlier start left running');
-    expect(isAlive(server)).toBe(false);
+    await gone(server);
     const database = databasePid();
     start.signal('SIGTERM');
     expect(await start.end()).toBe(0);
-    expect(isAlive(database)).toBe(false);
+    await gone(database);
   });
 
   it('recovers from a loss of everything at once', async () => {
