@@ -16,9 +16,12 @@ export async function aptInstall(name, what) {
   if (!mayInstall()) throw new SetupError(`${what} is missing. Install it, then start again: ${line}`);
   console.log(`Installing ${name} …`);
   const env = { DEBIAN_FRONTEND: 'noninteractive' };
-  await run('apt-get', ['update'], { quiet: true, env });
+  const update = await run('apt-get', ['update'], { quiet: true, env });
   const options = ['-y', '--no-install-recommends', '-o', 'DPkg::Lock::Timeout=120'];
   const { code, output } = await run('apt-get', ['install', ...options, name], { quiet: true, env });
-  if (code !== 0)
-    throw new SetupError(`${what} is missing and could not be installed (${line}): ${tellingLine(output)}`);
+  if (code !== 0) {
+    // Without its lists the installation only says that it knows no such package.
+    const said = tellingLine(update.code === 0 ? output : update.output);
+    throw new SetupError(`${what} is missing and could not be installed (${line}): ${said}`);
+  }
 }
