@@ -65,8 +65,9 @@ function readSessionKey(home: string): Uint8Array {
   throw new ConfigError(`The key ${file} is not whole: remove it, and everybody signs in anew`);
 }
 
-function isLoopback(url: string): boolean {
-  return ['127.0.0.1', 'localhost', '[::1]'].includes(new URL(url).hostname);
+/** True where only this machine reaches what listens on the host. */
+export function isLoopback(host: string): boolean {
+  return ['127.0.0.1', 'localhost', '::1', '[::1]'].includes(host);
 }
 
 /** @throws ConfigError naming each setting that is wrong */
@@ -79,8 +80,11 @@ export function readConfig(environment: NodeJS.ProcessEnv): Config {
   const settings = parsed.data;
   const demo = settings.TRIMWICK_DEMO === '1';
   // The demo people’s password is printed in the documentation.
-  if (demo && settings.NODE_ENV === 'production' && !isLoopback(settings.DATABASE_URL)) {
+  if (demo && settings.NODE_ENV === 'production' && !isLoopback(new URL(settings.DATABASE_URL).hostname)) {
     throw new ConfigError('Settings: TRIMWICK_DEMO: no demo teams in production beside a database elsewhere');
+  }
+  if (demo && !isLoopback(settings.HOST)) {
+    throw new ConfigError('Settings: TRIMWICK_DEMO: no demo teams where others reach this program (HOST)');
   }
   return {
     databaseUrl: settings.DATABASE_URL,

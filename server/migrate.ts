@@ -1,8 +1,8 @@
-import { ConfigError, readConfig, type Config } from './config.js';
+import { ConfigError, isLoopback, readConfig, type Config } from './config.js';
 import type { AppContext } from './context.js';
 import { makeDataSource } from './database/data-source.js';
 import { grantToApplication } from './database/grants.js';
-import { loadDemoTeams } from './database/seeds-demo.js';
+import { hasDemoTeams, loadDemoTeams } from './database/seeds-demo.js';
 import { loadReferenceValues } from './database/seeds-reference.js';
 import { Workers } from './workers/pool.js';
 
@@ -36,6 +36,11 @@ export async function migrate(config: Config): Promise<void> {
     await grantToApplication(owner, decodeURIComponent(new URL(config.databaseUrl).username));
     await loadReferenceValues(owner);
     if (config.demo) await makeDemo(config);
+    else if (!isLoopback(config.host) && (await hasDemoTeams(owner))) {
+      throw new ConfigError(
+        `Settings: HOST: ${config.host} would let others reach this database’s demo teams, whose password is printed in the documentation; choose another TRIMWICK_HOME or database`,
+      );
+    }
   } finally {
     await runner.release();
     await owner.destroy();

@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import { readFileSync } from 'node:fs';
+import type { DataSource } from 'typeorm';
 import type { Role } from '../../shared/roles.js';
 import type { Assembly } from '../../shared/schemas/assembly-records.js';
 import { assemblyDocumentSchema } from '../../shared/schemas/assembly.js';
@@ -37,6 +38,13 @@ const demoTeams: { name: string; people: { name: string; email: string; roles: R
     people: [{ name: 'Enid Creek', email: 'engineer@saltmarsh.example', roles: ['engineer'] }],
   },
 ];
+
+/** True where the demo people can sign in. */
+export async function hasDemoTeams(dataSource: DataSource): Promise<boolean> {
+  const emails = demoTeams.flatMap(({ people }) => people.map(({ email }) => email));
+  const [known] = await dataSource.query<unknown[]>('SELECT 1 FROM users WHERE email = ANY($1) LIMIT 1', [emails]);
+  return known !== undefined;
+}
 
 async function makeTeams(context: AppContext): Promise<void> {
   const { dataSource, workers, now } = context;

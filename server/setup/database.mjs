@@ -1,7 +1,7 @@
 import { SetupError } from './fail.mjs';
 import { PrivateCluster } from './postgres.mjs';
 
-const loopback = ['127.0.0.1', 'localhost', '[::1]'];
+const loopback = ['127.0.0.1', 'localhost', '::1', '[::1]'];
 
 /** True where only this machine reaches what listens on the address. */
 export function isLoopback(host) {

@@ -18,13 +18,14 @@ export async function startDemoInstance({ applicationUrl, ownerUrl, home }) {
     PORT: String(port),
     NODE_ENV: 'production',
   };
+  const base = `http://127.0.0.1:${port}`;
   await migrate(env);
   const service = webProcess(env);
   try {
-    await waitHealthy(port, service);
+    await waitHealthy(base, service);
   } catch (error) {
     await service.stop();
     throw error;
   }
-  return { base: `http://127.0.0.1:${port}`, stop: () => service.stop() };
+  return { base, stop: () => service.stop() };
 }

@@ -5,7 +5,7 @@ import { checkNode } from './node-version.mjs';
 import { ensurePackages } from './packages.mjs';
 import { ensureHome, packaged, trimwickHome } from './paths.mjs';
 import { endLeftovers, leaveHome, takeHome } from './processes.mjs';
-import { checkPortFree, migrate, readPort, Service, stopRequested, waitHealthy } from './service.mjs';
+import { checkPortFree, migrate, ownAddress, readPort, Service, stopRequested, waitHealthy } from './service.mjs';
 
 /** Serves from the sources until a stop is asked for: the API reloads, the client is exchanged in the page. */
 async function serve(home, port, clientPort, database, stopping) {
@@ -27,7 +27,7 @@ async function serve(home, port, clientPort, database, stopping) {
         path.join(home, 'server.pid'),
       ),
     );
-    if ((await Promise.race([waitHealthy(port, services[0]), stopping])) !== undefined) return;
+    if ((await Promise.race([waitHealthy(ownAddress(port), services[0]), stopping])) !== undefined) return;
     services.push(new Service(packaged('vite'), [], env, path.join(home, 'client.pid')));
     console.log(`\nTrimwick, reloading as you edit: http://127.0.0.1:${clientPort}\nCtrl-C stops it.`);
     await Promise.race([stopping, ...services.map((service) => service.ended)]);

@@ -83,9 +83,15 @@ export class Service {
   }
 }
 
+/** Address at which this machine reaches the program, whatever it listens on. */
+export function ownAddress(port, host = process.env.HOST) {
+  if (!host || host === '0.0.0.0' || host === '::') return `http://127.0.0.1:${port}`;
+  return host.includes(':') ? `http://[${host}]:${port}` : `http://${host}:${port}`;
+}
+
 /** Waits until the health route answers that all is well. */
-export async function waitHealthy(port, service, seconds = 60) {
-  const address = `http://127.0.0.1:${port}/api/v1/health`;
+export async function waitHealthy(base, service, seconds = 60) {
+  const address = `${base}/api/v1/health`;
   let said = '';
   for (const end = Date.now() + seconds * 1000; Date.now() < end;) {
     if (service.over) throw new SetupError('The server ended while starting (see above)');

@@ -6,10 +6,10 @@ import { checkNode } from './node-version.mjs';
 import { ensurePackages } from './packages.mjs';
 import { ensureHome, trimwickHome } from './paths.mjs';
 import { endLeftovers, leaveHome, takeHome } from './processes.mjs';
-import { checkPortFree, migrate, readPort, stopRequested, waitHealthy, webProcess } from './service.mjs';
+import { checkPortFree, migrate, ownAddress, readPort, stopRequested, waitHealthy, webProcess } from './service.mjs';
 
 function greet(port, demo) {
-  console.log(`\nTrimwick is at http://127.0.0.1:${port}\n`);
+  console.log(`\nTrimwick is at ${ownAddress(port)}\n`);
   if (demo) {
     console.log('Demo sign-ins, password trim-the-wick-4310:');
     console.log('  Brackenmoor Lanterns    admin@ designer@ engineer@ reviewer@ viewer@brackenmoor.example');
@@ -24,7 +24,7 @@ async function serve(home, port, database, stopping) {
   await migrate(env);
   const service = webProcess(env, path.join(home, 'server.pid'));
   try {
-    const stopped = await Promise.race([waitHealthy(port, service), stopping]);
+    const stopped = await Promise.race([waitHealthy(ownAddress(port), service), stopping]);
     if (stopped !== undefined) return;
     greet(port, database.demo);
     const end = await Promise.race([stopping, service.ended]);

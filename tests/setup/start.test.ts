@@ -214,6 +214,13 @@ describe('a start that cannot be', () => {
     expect(said).not.toContain('secret');
   });
 
+  it('lets nobody else reach a database that holds the demo teams', async () => {
+    const { code, said } = await failing({ ...settings, HOST: '0.0.0.0' });
+    expect(code).toBe(1);
+    expect(said).toMatch(/^trimwick: Settings: HOST: 0\.0\.0\.0 would let others reach .*$/);
+    expect(await listens(port)).toBe(false);
+  });
+
   it('leaves alone a folder “postgres” that holds something else', async () => {
     const elsewhere = mkdtempSync(path.join(folder, 'kept-'));
     mkdirSync(path.join(elsewhere, 'postgres'));
