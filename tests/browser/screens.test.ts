@@ -15,11 +15,11 @@ afterAll(async () => {
   await Promise.all([engineer, admin].map((person) => person.close()));
 });
 
-/** Id of the first entry of a list of the API. */
-async function firstId(list: 'assemblies' | 'decisions'): Promise<string> {
-  const answer = await engineer.page.request.get(`${engineer.base}/api/v1/${list}`);
+/** Id of the demo’s own entry of a list: other tests make more of them. */
+async function idOf(list: 'assemblies' | 'decisions', name: string): Promise<string> {
+  const answer = await engineer.page.request.get(`${engineer.base}/api/v1/${list}?search=${encodeURIComponent(name)}`);
   const [first] = ((await answer.json()) as { items: { id: string }[] }).items;
-  if (!first) throw new Error(`The demo has no ${list}`);
+  if (!first) throw new Error(`The demo’s “${name}” is not among the ${list}`);
   return first.id;
 }
 
@@ -28,13 +28,13 @@ const screens: [name: string, address: () => string | Promise<string>, words: st
   ['desk', () => '/', /lantern/i],
   ['assemblies', () => '/assemblies', /lantern/i],
   ['new assembly', () => '/assemblies/new', 'In your words'],
-  ['assembly', async () => `/assemblies/${await firstId('assemblies')}`, /ceiling/i],
+  ['assembly', async () => `/assemblies/${await idOf('assemblies', 'stall')}`, /ceiling/i],
   ['materials', () => '/materials', /PETG/],
   ['finishes', () => '/finishes', /emissivity/],
   ['parts', () => '/parts', /LED array/],
   ['rule sets', () => '/rules', /rule/i],
   ['register', () => '/decisions', /load box/i],
-  ['decision', async () => `/decisions/${await firstId('decisions')}`, /load box/i],
+  ['decision', async () => `/decisions/${await idOf('decisions', 'load box')}`, /load box/i],
   ['team', () => '/team', /Saltmarsh|Brackenmoor/],
   ['account', () => '/account', /password/i],
   ['guide', () => '/guide', /local code/i],
