@@ -20,7 +20,11 @@ const builds = {
   },
 };
 
+/** Scripts that are run as they are. */
+const unbuilt = path.join(root, 'server', 'setup');
+
 function addFile(hash, file) {
+  if (file === unbuilt) return;
   if (statSync(file).isDirectory()) {
     for (const name of readdirSync(file).sort()) addFile(hash, path.join(file, name));
     return;

@@ -1,5 +1,5 @@
 import { SetupError } from './fail.mjs';
-import { PrivateCluster } from './postgres.mjs';
+import { ensurePrograms, PrivateCluster } from './postgres.mjs';
 
 const loopback = ['127.0.0.1', 'localhost', '::1', '[::1]'];
 
@@ -28,14 +28,27 @@ function readAddress(name, otherwise) {
 }
 
 /**
+ * Says before anything is installed or built what a person has to mend: settings of the database, or that there is no
+ * PostgreSQL.
+ */
+export async function checkDatabase() {
+  if (process.env.DATABASE_URL) readAddresses();
+  else await ensurePrograms();
+}
+
+function readAddresses() {
+  const application = readAddress('DATABASE_URL');
+  return { application, owner: readAddress('DATABASE_OWNER_URL', application) };
+}
+
+/**
  * The database of a start: the private cluster, or the server that DATABASE_URL names.
  *
  * @returns environment for the server’s processes, and how to stop what was started
  */
 export async function openDatabase(home) {
   if (process.env.DATABASE_URL) {
-    const application = readAddress('DATABASE_URL');
-    const owner = readAddress('DATABASE_OWNER_URL', application);
+    const { application, owner } = readAddresses();
     const demo = wantsDemo(process.env);
     return {
       env: { DATABASE_URL: application, DATABASE_OWNER_URL: owner, TRIMWICK_DEMO: demo ? '1' : '0' },

@@ -1,3 +1,4 @@
+import path from 'node:path';
 import { freePort } from './postgres.mjs';
 import { migrate, waitHealthy, webProcess } from './service.mjs';
 
@@ -20,7 +21,7 @@ export async function startDemoInstance({ applicationUrl, ownerUrl, home }) {
   };
   const base = `http://127.0.0.1:${port}`;
   await migrate(env);
-  const service = webProcess(env);
+  const service = webProcess(env, path.join(home, 'server.pid'));
   try {
     await waitHealthy(base, service);
   } catch (error) {

@@ -1,5 +1,5 @@
 import path from 'node:path';
-import { openDatabase } from './database.mjs';
+import { checkDatabase, openDatabase } from './database.mjs';
 import { runScript } from './fail.mjs';
 import { checkNode } from './node-version.mjs';
 import { ensurePackages } from './packages.mjs';
@@ -47,6 +47,7 @@ await runScript(async () => {
     await endLeftovers(home);
     await checkPortFree(port);
     await checkPortFree(clientPort, 'VITE_PORT');
+    await checkDatabase();
     await ensurePackages();
     const stopping = stopRequested();
     const database = await openDatabase(home);

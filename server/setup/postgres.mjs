@@ -34,7 +34,8 @@ function findPrograms(version) {
   return folders.find((folder) => existsSync(path.join(folder, 'initdb')) && existsSync(path.join(folder, 'pg_ctl')));
 }
 
-async function ensurePrograms() {
+/** Finds PostgreSQL’s programs, or installs them where this process may. */
+export async function ensurePrograms() {
   const found = findPrograms();
   if (found) return found;
   await aptInstall('postgresql', 'PostgreSQL');

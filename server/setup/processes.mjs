@@ -74,6 +74,20 @@ function signalGroup(pid, signal) {
   }
 }
 
+/** Waits until a file notes no running process, for a while. */
+async function waitGone(file) {
+  for (const end = Date.now() + patienceMs; notedProcess(file) && Date.now() < end;)
+    await new Promise((resolve) => setTimeout(resolve, 50));
+}
+
+/** Ends the start that has a home, if any. */
+export async function endStart(home) {
+  const holder = notedProcess(startFile(home));
+  if (!holder) return;
+  process.kill(holder.pid, 'SIGTERM');
+  await waitGone(startFile(home));
+}
+
 /** Ends the services that an earlier start of this home left when it was killed. */
 export async function endLeftovers(home) {
   for (const name of ['server', 'client']) {
@@ -82,8 +96,7 @@ export async function endLeftovers(home) {
     if (left) {
       console.log(`Ending a ${name} that an earlier start left running …`);
       signalGroup(left.pid, 'SIGTERM');
-      for (const end = Date.now() + patienceMs; notedProcess(file) && Date.now() < end;)
-        await new Promise((resolve) => setTimeout(resolve, 50));
+      await waitGone(file);
       signalGroup(left.pid, 'SIGKILL');
     }
     rmSync(file, { force: true });

@@ -1,6 +1,6 @@
 import path from 'node:path';
 import { ensureBuilt } from './build.mjs';
-import { openDatabase } from './database.mjs';
+import { checkDatabase, openDatabase } from './database.mjs';
 import { runScript, SetupError } from './fail.mjs';
 import { checkNode } from './node-version.mjs';
 import { ensurePackages } from './packages.mjs';
@@ -44,6 +44,7 @@ await runScript(async () => {
   try {
     await endLeftovers(home);
     await checkPortFree(port);
+    await checkDatabase();
     await ensurePackages();
     await ensureBuilt();
     const stopping = stopRequested();

@@ -1,16 +1,16 @@
-import { chmodSync, mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import { chmodSync, existsSync, mkdtempSync, readFileSync } from 'node:fs';
 import os from 'node:os';
 import path from 'node:path';
 import { ensureBrowser } from './browser.mjs';
 import { ensureBuilt } from './build.mjs';
-import { told } from './fail.mjs';
+import { SetupError, told } from './fail.mjs';
 import { checkNode } from './node-version.mjs';
 import { ensurePackages } from './packages.mjs';
 import { packaged } from './paths.mjs';
 import { PrivateCluster } from './postgres.mjs';
 import { noteProcess } from './processes.mjs';
 import { endRunning, run } from './run.mjs';
-import { sweepAbandoned, testFolderPrefix } from './throw-away.mjs';
+import { clearTestFolder, sweepAbandoned, testFolderPrefix } from './throw-away.mjs';
 
 /** Checks beside the tests proper; each counts as one. */
 const gates = {
@@ -83,6 +83,7 @@ async function runProjects(names, files, env, folder) {
     ],
     { env: { ...neutral, ...env } },
   );
+  if (!existsSync(report)) throw new SetupError(`The tests of ${names.join(', ')} ended without a report`);
   const { numPassedTests, numFailedTests } = JSON.parse(readFileSync(report, 'utf8'));
   passed += numPassedTests;
   // A file that does not even load has no tests to count.
@@ -121,23 +122,19 @@ await attempt(async () => {
   chmodSync(folder, 0o755);
   noteProcess(path.join(folder, 'test.pid'), process.pid);
   const cluster = new PrivateCluster(path.join(folder, 'home'), { throwAway: true });
-  const cleanUp = async () => {
-    await cluster.remove();
-    rmSync(folder, { recursive: true, force: true });
-  };
   let stopping = false;
   for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) {
     process.on(signal, () => {
       if (stopping) return;
       stopping = true;
       endRunning();
-      void cleanUp().finally(() => process.exit(1));
+      void clearTestFolder(folder).finally(() => process.exit(1));
     });
   }
   try {
     await runAll(chosen, cluster, folder);
   } finally {
-    if (!stopping) await cleanUp();
+    if (!stopping) await clearTestFolder(folder);
   }
 });
 if (passed + failed === 0) {
