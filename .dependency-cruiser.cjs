@@ -34,6 +34,14 @@ module.exports = {
       to: { path: ['^server/engine/', '^server/database/', '^node_modules/(typeorm|pg)/'] },
     },
     {
+      name: 'services-know-no-http',
+      severity: 'error',
+      from: { path: '^server/(services|policies|records|workers|database)/' },
+      to: {
+        path: ['^node_modules/(@types/)?(express|cookie-parser|helmet)', '^server/middleware/', '^server/app\\.ts$'],
+      },
+    },
+    {
       name: 'entities-hold-no-logic',
       severity: 'error',
       from: { path: '^server/database/entities/' },
