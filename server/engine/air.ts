@@ -54,6 +54,7 @@ const heatCapacity = {
  * c_p/R = 1 − τ² α°_ττ, with τ = 132.6312 K/T.
  *
  * @param t temperature T [K]
+ * @param out where to write; a new object without it
  * @returns `value` [J/(kg K)] and `slope` dc_p/dT [J/(kg K²)]
  *
  * **Valid for** 60 … 2000 K (the term of dissociation, under 10⁻⁶ below 1500 K, is left out).
@@ -61,7 +62,7 @@ const heatCapacity = {
  * coefficients from memory.
  * **Checked against** handbook values at 250 … 500 K within 0.5 %, tests/reference/air-handbook-table.
  */
-export function airHeatCapacity(t: number): { value: number; slope: number } {
+export function airHeatCapacity(t: number, out = { value: 0, slope: 0 }): { value: number; slope: number } {
   const { constant, criticalTemperature, molarGasConstant, molarMass, power, root, einstein } = heatCapacity;
   const tau = criticalTemperature / t;
   // τ² α°_ττ and its derivative by τ.
@@ -70,7 +71,8 @@ export function airHeatCapacity(t: number): { value: number; slope: number } {
   sum += 0.75 * root * tau ** 1.5;
   slope += 1.125 * root * Math.sqrt(tau);
   sum -= constant;
-  for (const [share, theta] of einstein) {
+  for (let i = 0; i < einstein.length; i++) {
+    const [share, theta] = einstein[i] as readonly [number, number];
     const u = theta * tau;
     const e = Math.exp(-u);
     const term = (share * u * u * e) / (1 - e) ** 2;
@@ -78,7 +80,9 @@ export function airHeatCapacity(t: number): { value: number; slope: number } {
     slope -= term * (2 / tau - (theta * (1 + e)) / (1 - e));
   }
   const r = molarGasConstant / molarMass;
-  return { value: r * (1 - sum), slope: r * slope * (tau / t) };
+  out.value = r * (1 - sum);
+  out.slope = r * slope * (tau / t);
+  return out;
 }
 
 /** Properties of air at one film temperature, with the logarithmic slopes that the derivatives of a film need. */
@@ -111,6 +115,8 @@ export function blankFilmAir(): FilmAir {
   };
 }
 
+const heatCapacityNow = { value: 0, slope: 0 };
+
 /**
  * All properties at a film temperature, written into `out`.
  *
@@ -123,7 +129,7 @@ export function blankFilmAir(): FilmAir {
 export function filmAir(t: number, pressure: number, gravity: number, out: FilmAir): void {
   const mu = sutherland(viscosity, t);
   const k = sutherland(conductivity, t);
-  const cp = airHeatCapacity(t);
+  const cp = airHeatCapacity(t, heatCapacityNow);
   const muSlope = sutherlandSlope(viscosity, t);
   const kSlope = sutherlandSlope(conductivity, t);
   const cpSlope = cp.slope / cp.value;

@@ -36,7 +36,11 @@ class DrivenNetwork {
     try {
       solveSteady(this.network);
     } catch (error) {
-      if (error instanceof EngineError && (error.code === 'runaway' || error.code === 'not-converged')) return false;
+      if (
+        error instanceof EngineError &&
+        (error.code === 'runaway' || error.code === 'not-converged' || error.code === 'outside-range')
+      )
+        return false;
       throw error;
     }
     this.warm.set(this.network.temperatures);
@@ -45,8 +49,8 @@ class DrivenNetwork {
 }
 
 /**
- * What “× scale” means: the supply’s current, or the given heats and own currents of the sources. Where the present drive is
- * zero the scale counts in amperes or watts.
+ * What “× scale” means: the supply’s current, or of each named source its given heat, its current (its supply’s, where it has
+ * one) and its output power. Where the present drive is zero the scale counts in amperes or watts.
  */
 function driveSetter(network: PreparedNetwork, drive: Drive): (scale: number) => void {
   const { document } = network;
@@ -70,12 +74,18 @@ function driveSetter(network: PreparedNetwork, drive: Drive): (scale: number) =>
       const message = node ? `“${id}” has a fixed temperature and makes no heat` : `There is no node “${id}”`;
       throw new EngineError('unknown-reference', message, [{ path, message, node: id }]);
     }
-    const own = node.source && node.source.kind !== 'converter' ? node.source.currentA : undefined;
-    const heat = node.heatW ?? (own === undefined ? 0 : undefined);
-    const baseHeat = heat === 0 ? 1 : heat;
+    const { source, heatW } = node;
+    const supply = source?.supply === undefined ? -1 : document.supplies.findIndex((s) => s.id === source.supply);
+    const supplyA = document.supplies[supply]?.currentA ?? 0;
+    const ownA = source && source.kind !== 'converter' && supply < 0 ? (source.currentA ?? 0) : undefined;
+    const outputW = source?.kind === 'converter' ? source.outputW : undefined;
+    // Only a bare node is driven by heat alone, and only there a zero means watts.
+    const baseHeat = source ? heatW : heatW === undefined || heatW === 0 ? 1 : heatW;
     return (scale: number) => {
       if (baseHeat !== undefined) network.givenHeat[n] = baseHeat * scale;
-      if (own !== undefined) network.ownCurrents[n] = (own === 0 ? 1 : own) * scale;
+      if (supply >= 0) network.supplyCurrents[supply] = (supplyA > 0 ? supplyA : 1) * scale;
+      if (ownA !== undefined) network.ownCurrents[n] = (ownA > 0 ? ownA : 1) * scale;
+      if (outputW !== undefined) network.outputs[n] = (outputW > 0 ? outputW : 1) * scale;
     };
   });
   return (scale) => {
@@ -119,8 +129,9 @@ function refine(driven: DrivenNetwork, crossings: readonly Crossing[], target: C
     // A step just past the chord’s crossing closes the bracket from the other side.
     const edge = Math.max(bracket * high * 0.3, (high - low) * 1e-3);
     const tryAt = i % 8 === 7 ? (low + high) / 2 : Math.min(Math.max(chord, low + edge), high - edge);
+    // No steady state here: that is a runaway below this crossing, and what the limit would be is not known.
     if (!driven.solve(tryAt)) {
-      target.high = tryAt;
+      target.high = Infinity;
       return;
     }
     const before = target.low;

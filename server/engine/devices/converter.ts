@@ -6,10 +6,9 @@ export type ConverterSource = Extract<NetworkSource, { kind: 'converter' }>;
 /**
  * Loss of a converter [W]: P_out (1/η − 1) + quiescent, η a number or a table over P_out (linear between points).
  *
- * @param supplyCurrent current of its supply [A], which sets P_out = outputV × I where no output power is given
+ * @param outputW output power P_out [W]
  */
-export function converterLoss(converter: ConverterSource, supplyCurrent: number): number {
-  const outputW = converter.outputW ?? (converter.outputV ?? 0) * supplyCurrent;
+export function converterLoss(converter: ConverterSource, outputW: number): number {
   const efficiency = lookUp(converter.efficiency, outputW);
   return outputW * (1 / efficiency - 1) + converter.quiescentW;
 }

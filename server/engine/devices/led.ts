@@ -23,14 +23,18 @@ export function blankLedState(): LedState {
   return { voltage: 0, efficiency: 0, heat: 0, light: 0, heatByT: 0, heatByI: 0, lightByT: 0, lightByI: 0 };
 }
 
-/** x held within 0 … 0.95 with a continuous slope: a parabola over ±0.02 about each end. */
+/**
+ * x held within 0 … 0.95 with a continuous slope. Zero stays zero: over the first 0.02 a cubic takes the slope from 0 to 1; at the
+ * upper end a parabola over ±0.02 bends into 0.95.
+ */
 function holdEfficiency(x: number, out: { value: number; slope: number }): void {
-  if (x <= -bend) {
+  if (x <= 0) {
     out.value = 0;
     out.slope = 0;
   } else if (x < bend) {
-    out.value = (x + bend) ** 2 / (4 * bend);
-    out.slope = (x + bend) / (2 * bend);
+    const u = x / bend;
+    out.value = bend * u * u * (2 - u);
+    out.slope = u * (4 - 3 * u);
   } else if (x <= mostEfficient - bend) {
     out.value = x;
     out.slope = 1;

@@ -35,6 +35,12 @@ export class SharedSupply {
   share(current: number, kelvin: Float64Array): void {
     const { leds, ohm, zeroCurrentVoltage, dark, currents, byTemperature } = this;
     const m = leds.length;
+    if (m === 1) {
+      // Alone it takes all; nothing is shared, and no digits are lost.
+      currents[0] = current;
+      byTemperature[0] = 0;
+      return;
+    }
     for (let k = 0; k < m; k++) {
       const led = leds[k] as LedSource;
       const dT = (kelvin[k] as number) - zeroCelsius - led.atC;
@@ -60,9 +66,15 @@ export class SharedSupply {
         }
       }
     }
+    // I_k = (I + Σ (V₀_j − V₀_k)/R_j) / (R_k Σ 1/R): from differences of voltages, which keep their digits.
     for (let k = 0; k < m; k++) {
       const lit = !dark[k];
-      currents[k] = lit ? (this.voltage - (zeroCurrentVoltage[k] as number)) / (ohm[k] as number) : 0;
+      let above = current;
+      for (let j = 0; j < m; j++) {
+        if (dark[j]) continue;
+        above += ((zeroCurrentVoltage[j] as number) - (zeroCurrentVoltage[k] as number)) / (ohm[j] as number);
+      }
+      currents[k] = lit ? above / (conductance * (ohm[k] as number)) : 0;
       for (let j = 0; j < m; j++) {
         const kappa = (leds[j] as LedSource).voltagePerK;
         const common = dark[j] ? 0 : kappa / ((ohm[j] as number) * conductance);

@@ -5,6 +5,7 @@ import { gravity, zeroCelsius } from '../constants.js';
 import type { Correlation } from '../convection/correlation.js';
 import { resistanceAt } from '../devices/resistor.js';
 import { lookUp } from '../tables.js';
+import type { SteadyState } from './newton.js';
 import type { PreparedNetwork } from './prepared.js';
 import { linkName } from './validate.js';
 
@@ -16,7 +17,7 @@ export function deviceAnswers(network: PreparedNetwork, stable: boolean): Record
   for (const { node, source, supply } of network.others) {
     const currentA = (supply >= 0 ? network.supplyCurrents[supply] : network.ownCurrents[node]) ?? 0;
     if (source.kind === 'converter') {
-      const outputW = source.outputW ?? (source.outputV ?? 0) * currentA;
+      const outputW = network.outputOf(node, source, currentA);
       const heatW = (network.heat[node] ?? 0) - (network.givenHeat[node] ?? 0);
       answers[id(node)] = { electricalW: outputW + heatW, heatW, ...(supply >= 0 ? { currentA } : {}) };
       continue;
@@ -193,7 +194,7 @@ export function temperaturesC(network: PreparedNetwork): Record<string, number> 
 }
 
 /** Everything a solved network says. */
-export function networkAnswer(network: PreparedNetwork, state: { iterations: number; stable: boolean }): SolveAnswer {
+export function networkAnswer(network: PreparedNetwork, state: SteadyState): SolveAnswer {
   const { links, limits } = network.document;
   const named = links.map((link, l) => [linkName(link, l), l] as const);
   const warnings = rangeWarnings(network);
@@ -201,6 +202,13 @@ export function networkAnswer(network: PreparedNetwork, state: { iterations: num
     warnings.push({
       code: 'not-stable',
       message: 'This steady state is not stable: the slightest mismatch would leave it',
+    });
+  }
+  if (state.leftUnstable) {
+    warnings.push({
+      code: 'share-not-stable',
+      message:
+        'There is a further steady state that is not stable (arrays in parallel sharing evenly): the slightest mismatch leaves it for the one given here',
     });
   }
   return {

@@ -7,10 +7,11 @@ export const hottest = 1500;
 const coldest = 20;
 /** Largest step of one iteration [K]. */
 const largestStep = 150;
-const mostIterations = 60;
+const mostIterations = 80;
+const mostHalvings = 10;
 const mostTransientSteps = 400;
 /** A solution’s last step [K], and its largest residual as a share of the heat that flows. */
-const stepTolerance = 1e-9;
+const stepTolerance = 1e-10;
 const residualTolerance = 1e-11;
 /** Rounding that a residual cannot go below, as a multiple of Σ|conductance| × temperature. */
 const rounding = 8 * Number.EPSILON;
@@ -19,6 +20,8 @@ export interface SteadyState {
   iterations: number;
   /** False where the slightest push would leave this state: no warm-up ends here. */
   stable: boolean;
+  /** True where an unstable steady state was found first, and left for this one. */
+  leftUnstable?: boolean;
 }
 
 function heatScale(network: PreparedNetwork): number {
@@ -51,6 +54,28 @@ function norm(values: Float64Array): number {
   let sum = 0;
   for (let i = 0; i < values.length; i++) sum += (values[i] as number) ** 2;
   return Math.sqrt(sum);
+}
+
+/** Room that the iterations need, made once per network. */
+interface Workspace {
+  base: Float64Array;
+  step: Float64Array;
+  weight: Float64Array;
+}
+
+const workspaces = new WeakMap<PreparedNetwork, Workspace>();
+
+function workspaceOf(network: PreparedNetwork): Workspace {
+  let workspace = workspaces.get(network);
+  if (!workspace) {
+    workspace = {
+      base: new Float64Array(network.nodeCount),
+      step: new Float64Array(network.unknownCount),
+      weight: new Float64Array(network.unknownCount),
+    };
+    workspaces.set(network, workspace);
+  }
+  return workspace;
 }
 
 /** Moves the unknown temperatures by −scale × step from `base`, fenced off from 0 K. Returns the largest move. */
@@ -93,47 +118,69 @@ export function firstGuess(network: PreparedNetwork): void {
   }
 }
 
-/** Newton’s method with a line search on the residual. Returns the iterations, or −1 where it got nowhere. */
-function newton(network: PreparedNetwork, base: Float64Array, step: Float64Array): number {
+/** Σ (residual / stiffness)²: how far the nodes are from rest in kelvins, so that a stiff node’s rounding does not hide a soft one. */
+function mismatch(network: PreparedNetwork, weight: Float64Array): number {
+  let sum = 0;
+  for (let i = 0; i < weight.length; i++) sum += ((network.residual[i] as number) * (weight[i] as number)) ** 2;
+  return sum;
+}
+
+function largestOf(step: Float64Array): number {
+  let largest = 0;
+  for (let i = 0; i < step.length; i++) {
+    const size = Math.abs(step[i] as number);
+    if (!(size <= largest)) largest = size;
+  }
+  return largest;
+}
+
+/**
+ * Newton’s method with a line search on the mismatch. Returns the iterations, or −1 where it got nowhere.
+ *
+ * It ends where the residual is within its tolerance and the step is within its own, or where rounding lets no step shrink further.
+ */
+function newton(network: PreparedNetwork, { base, step, weight }: Workspace): number {
   network.evaluate();
+  let lastLargest = Infinity;
   for (let iteration = 1; iteration <= mostIterations; iteration++) {
-    const before = norm(network.residual);
-    if (!Number.isFinite(before)) return -1;
-    const done = excess(network);
+    const done = excess(network) <= 1;
+    for (let i = 0; i < weight.length; i++) weight[i] = 1 / Math.max(network.stiffness[i] as number, 1e-15);
+    const before = mismatch(network, weight);
     base.set(network.temperatures);
     step.set(network.residual);
     network.matrix.factor();
     network.matrix.solve(step);
-    let largest = 0;
-    for (let i = 0; i < step.length; i++) largest = Math.max(largest, Math.abs(step[i] as number));
-    if (!Number.isFinite(largest)) return -1;
+    const largest = largestOf(step);
+    if (!Number.isFinite(before) || !Number.isFinite(largest)) return -1;
+    if (done && largest <= stepTolerance) return iteration;
+    // Within the tolerance already: full steps, as long as each is shorter than the last.
+    if (done && largest >= 0.9 * lastLargest) return iteration;
+    lastLargest = largest;
     let scale = largest > largestStep ? largestStep / largest : 1;
     let accepted = false;
-    for (let halving = 0; halving < 8; halving++) {
-      const moved = move(network, base, step, scale);
+    for (let halving = 0; halving < mostHalvings; halving++) {
+      move(network, base, step, scale);
       network.evaluate();
-      if (norm(network.residual) < before * (1 - 1e-4 * scale) || (done <= 1 && moved <= stepTolerance)) {
+      if (done || mismatch(network, weight) < before * (1 - 1e-4 * scale)) {
         accepted = true;
         break;
       }
       scale /= 2;
     }
     if (!accepted) {
-      // At the rounding floor no step can do better: that is an answer. Elsewhere it is not.
       network.temperatures.set(base);
       network.evaluate();
-      return done <= 1 ? iteration : -1;
+      return -1;
     }
-    if (excess(network) <= 1 && largest * scale <= stepTolerance) return iteration;
   }
-  return -1;
+  return excess(network) <= 1 ? mostIterations : -1;
 }
 
 /**
  * Pseudo-transient continuation: implicit steps of a warm-up with one heat capacity everywhere, growing as the residual falls. Ends
  * near a state that a warm-up reaches. Returns the steps, or −1.
  */
-function transient(network: PreparedNetwork, base: Float64Array, step: Float64Array): number {
+function transient(network: PreparedNetwork, { base, step }: Workspace): number {
   network.evaluate();
   let pace = 0;
   for (let i = 0; i < network.unknownCount; i++) pace = Math.max(pace, network.stiffness[i] as number);
@@ -146,8 +193,7 @@ function transient(network: PreparedNetwork, base: Float64Array, step: Float64Ar
     for (let i = 0; i < diagonal.length; i++) diagonal[i] = (diagonal[i] as number) + pace;
     network.matrix.factor();
     network.matrix.solve(step);
-    let largest = 0;
-    for (let i = 0; i < step.length; i++) largest = Math.max(largest, Math.abs(step[i] as number));
+    const largest = largestOf(step);
     if (!Number.isFinite(largest)) return -1;
     if (network.matrix.negativePivots > 0 || largest > 50) {
       // Too long a step: it would leap over the state that a warm-up reaches.
@@ -195,9 +241,8 @@ export function solveSteady(network: PreparedNetwork): SteadyState {
     network.evaluate();
     return { iterations: 0, stable: true };
   }
-  const base = new Float64Array(network.nodeCount);
-  const step = new Float64Array(network.unknownCount);
-  let iterations = newton(network, base, step);
+  const workspace = workspaceOf(network);
+  let iterations = newton(network, workspace);
   let stable = iterations > 0 && factorHere(network);
   if (iterations > 0 && stable) {
     refuseTooHot(network);
@@ -207,35 +252,48 @@ export function solveSteady(network: PreparedNetwork): SteadyState {
   const spent = Math.max(iterations, 0);
   if (found) stagger(network);
   else firstGuess(network);
-  const steps = transient(network, base, step);
-  iterations = newton(network, base, step);
+  const steps = transient(network, workspace);
+  iterations = newton(network, workspace);
   if (iterations > 0) {
     stable = factorHere(network);
     refuseTooHot(network);
-    return { iterations: spent + Math.max(steps, 0) + iterations, stable };
+    return { iterations: spent + Math.max(steps, 0) + iterations, stable, leftUnstable: found !== null };
   }
-  const hot = network.temperatures.some((temperature) => !(temperature < hottest));
-  if (hot || steps < 0) throw runaway(network);
+  const extreme = network.temperatures.some((t) => !(t < hottest) || t <= coldest * 1.001);
+  if (extreme || steps < 0) throw runaway(network);
   throw new EngineError('not-converged', 'The network did not come to rest: no steady state was found');
 }
 
-/** The node with a temperature-dependent source that is hottest; else the hottest of all. */
-function runawayNode(network: PreparedNetwork): string {
-  const { nodes } = network.document;
-  const sources = nodes.map((node, i) => ({
-    node,
-    t: network.temperatures[i] as number,
-    source: node.source !== undefined,
-  }));
-  const candidates = sources.some(({ source }) => source) ? sources.filter(({ source }) => source) : sources;
-  return candidates.reduce((a, b) => (b.t > a.t || Number.isNaN(b.t) ? b : a)).node.id;
+function unknownNodes(network: PreparedNetwork) {
+  return network.document.nodes.flatMap((node, i) =>
+    (network.unknown[i] as number) < 0
+      ? []
+      : [
+          {
+            id: node.id,
+            t: network.temperatures[i] as number,
+            heat: network.heat[i] as number,
+            source: node.source !== undefined,
+          },
+        ],
+  );
 }
 
+/** What runs away: of the nodes with a source the hottest, else the hottest of all; a cooler that nothing can feed is named as such. */
 function runaway(network: PreparedNetwork): EngineError {
-  const node = runawayNode(network);
+  const nodes = unknownNodes(network);
+  const coldestNode = nodes.reduce((a, b) => (b.t < a.t ? b : a));
+  const sink = nodes.reduce((a, b) => (b.heat < a.heat ? b : a));
+  const cooled = coldestNode.t <= coldest * 1.001 && sink.heat < 0;
+  const heated = nodes.some(({ source }) => source) ? nodes.filter(({ source }) => source) : nodes;
+  const node = cooled ? sink.id : heated.reduce((a, b) => (b.t > a.t || Number.isNaN(b.t) ? b : a)).id;
+  const message = cooled
+    ? `“${node}” takes away more heat than can reach it above 0 K`
+    : `“${node}” runs away: there is no steady state below ${String(hottest)} K at this drive`;
   const i = network.nodeIndex.get(node) as number;
-  const message = `“${node}” runs away: there is no steady state below ${String(hottest)} K at this drive`;
-  return new EngineError('runaway', message, [{ path: `/nodes/${String(i)}`, message, node }]);
+  return new EngineError(cooled ? 'outside-range' : 'runaway', message, [
+    { path: `/nodes/${String(i)}`, message, node },
+  ]);
 }
 
 function refuseTooHot(network: PreparedNetwork): void {

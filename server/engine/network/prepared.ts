@@ -1,6 +1,6 @@
 import type { NetworkDocument, NetworkSource } from '../../../shared/schemas/network.js';
 import { zeroCelsius } from '../constants.js';
-import { converterLoss } from '../devices/converter.js';
+import { converterLoss, type ConverterSource } from '../devices/converter.js';
 import { blankLedState, ledState, type LedSource, type LedState } from '../devices/led.js';
 import { resistanceAt } from '../devices/resistor.js';
 import { SharedSupply } from '../devices/sharing.js';
@@ -53,6 +53,8 @@ export class PreparedNetwork {
   readonly supplyCurrents: Float64Array;
   readonly ownCurrents: Float64Array;
   readonly givenHeat: Float64Array;
+  /** Output power of converters that have one of their own [W], by node. */
+  readonly outputs: Float64Array;
   /** Heat that each node makes or absorbs [W], light absorbed included, as of the last `evaluate`. */
   readonly heat: Float64Array;
   /** Light that leaves the network [W]. */
@@ -80,6 +82,7 @@ export class PreparedNetwork {
     this.unknownCount = count;
     this.temperatures = Float64Array.from(nodes, (node) => (node.fixedC ?? 25) + zeroCelsius);
     this.givenHeat = Float64Array.from(nodes, (node) => node.heatW ?? 0);
+    this.outputs = Float64Array.from(nodes, ({ source }) => (source?.kind === 'converter' ? (source.outputW ?? 0) : 0));
     this.heat = new Float64Array(nodes.length);
     this.residual = new Float64Array(count);
     this.stiffness = new Float64Array(count);
@@ -200,7 +203,9 @@ export class PreparedNetwork {
       const current =
         device.supply >= 0 ? (this.supplyCurrents[device.supply] as number) : (this.ownCurrents[device.node] as number);
       if (device.source.kind === 'converter') {
-        heat[device.node] = (heat[device.node] as number) + converterLoss(device.source, current);
+        heat[device.node] =
+          (heat[device.node] as number) +
+          converterLoss(device.source, this.outputOf(device.node, device.source, current));
         continue;
       }
       resistanceAt(device.source, temperatures[device.node] as number, ohm);
@@ -210,6 +215,11 @@ export class PreparedNetwork {
     }
     this.lightOut = 0;
     for (let g = 0; g < this.ledGroups.length; g++) this.evaluateGroup(g);
+  }
+
+  /** Output power of a converter [W]: its own, or output voltage × its supply’s current. */
+  outputOf(node: number, converter: ConverterSource, current: number): number {
+    return converter.outputW === undefined ? (converter.outputV ?? 0) * current : (this.outputs[node] as number);
   }
 
   private evaluateGroup(g: number): void {

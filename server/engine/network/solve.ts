@@ -23,7 +23,8 @@ function scaleAll(network: PreparedNetwork, share: number): void {
   document.supplies.forEach(({ currentA }, i) => (network.supplyCurrents[i] = currentA * share));
   document.nodes.forEach(({ heatW, source }, i) => {
     network.givenHeat[i] = (heatW ?? 0) * share;
-    if (source && source.kind !== 'converter') network.ownCurrents[i] = (source.currentA ?? 0) * share;
+    if (source?.kind === 'converter') network.outputs[i] = (source.outputW ?? 0) * share;
+    else if (source) network.ownCurrents[i] = (source.currentA ?? 0) * share;
   });
 }
 

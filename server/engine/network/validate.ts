@@ -103,7 +103,7 @@ function checkSource(
   source: NetworkSource,
   node: string,
   path: string,
-  known: { nodes: ReadonlySet<string>; supplies: ReadonlySet<string> },
+  known: { nodes: ReadonlySet<string>; supplies: ReadonlySet<string>; fixed: ReadonlySet<string> },
   findings: Findings,
 ): void {
   if (source.supply !== undefined && !known.supplies.has(source.supply)) {
@@ -132,6 +132,10 @@ function checkSource(
   }
   if (source.kind !== 'led') return;
   source.light.forEach((light, i) => {
+    if (known.fixed.has(light.node)) {
+      const message = `The light of “${node}” falls on “${light.node}”, whose temperature is fixed: let it leave instead`;
+      findings.add('heat-into-fixed', { path: `${path}/light/${String(i)}/node`, message, node });
+    }
     if (known.nodes.has(light.node)) return;
     const message = `The light of “${node}” falls on a node “${light.node}” that is not there`;
     findings.add('unknown-reference', { path: `${path}/light/${String(i)}/node`, message, node });
@@ -226,8 +230,10 @@ export function validateNetwork(document: NetworkDocument): void {
     links.add(name);
     checkLink(link, i, nodes, findings);
   });
+  const fixed = new Set(document.nodes.filter(({ fixedC }) => fixedC !== undefined).map(({ id }) => id));
   document.nodes.forEach((node, i) => {
-    if (node.source) checkSource(node.source, node.id, `/nodes/${String(i)}/source`, { nodes, supplies }, findings);
+    if (node.source)
+      checkSource(node.source, node.id, `/nodes/${String(i)}/source`, { nodes, supplies, fixed }, findings);
   });
   checkLimits(document, { nodes, supplies }, findings);
   if (findings.list.length === 0) {
