@@ -215,7 +215,8 @@ export function findCeiling(
     record(crossings, scale);
     if (crossings.some(({ high }) => high === 0)) return atZero(driven, crossings);
     last = scale;
-    const open = crossings.some(({ high }) => high === Infinity);
+    // Without any limit the scan goes on for a runaway.
+    const open = crossings.length === 0 || crossings.some(({ high }) => high === Infinity);
     if (scale >= range[1] || !open || (options.onlyBinding && crossings.some(({ high }) => high < Infinity))) break;
   }
 
