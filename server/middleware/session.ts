@@ -12,6 +12,12 @@ import {
 
 const accessCookie = 'trimwick_access';
 const refreshCookie = 'trimwick_refresh';
+/** Says only that there is a session, so that a page without one need not ask. It opens nothing. */
+const presentCookie = 'trimwick_present';
+
+function presentOptions(request: Request, seconds: number): CookieOptions {
+  return { ...cookieOptions(request, seconds), httpOnly: false, path: '/' };
+}
 
 function cookieOptions(request: Request, seconds: number): CookieOptions {
   return { httpOnly: true, sameSite: 'strict', secure: request.secure, path: '/api', maxAge: seconds * 1000 };
@@ -27,11 +33,13 @@ export async function setSessionCookies(
   response.cookie(accessCookie, access, cookieOptions(request, accessSeconds));
   if (session.refreshToken !== null) {
     response.cookie(refreshCookie, session.refreshToken, cookieOptions(request, sessionDays * 86_400));
+    response.cookie(presentCookie, 'marker', presentOptions(request, sessionDays * 86_400));
   }
 }
 
 export function clearSessionCookies(request: Request, response: Response): void {
   for (const name of [accessCookie, refreshCookie]) response.clearCookie(name, cookieOptions(request, 0));
+  response.clearCookie(presentCookie, presentOptions(request, 0));
 }
 
 /** Finds who asks: by the access token, or by changing the refresh token where that has run out. */

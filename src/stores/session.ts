@@ -5,6 +5,11 @@ import type { Session } from '../../shared/schemas/session.js';
 import * as api from '../api/session.js';
 import { ApiError } from '../api/client.js';
 
+/** The server leaves this mark beside a session; without it there is none to ask for. */
+function mayHaveSession(): boolean {
+  return document.cookie.split('; ').includes('trimwick_present=marker');
+}
+
 /** Who is signed in, in which team, with which roles. */
 export const useSessionStore = defineStore('session', () => {
   const session = shallowRef<Session | null>(null);
@@ -14,6 +19,11 @@ export const useSessionStore = defineStore('session', () => {
 
   /** Asks the server; a lost connection leaves things as they were and is thrown. */
   async function load(): Promise<void> {
+    if (!mayHaveSession()) {
+      session.value = null;
+      known.value = true;
+      return;
+    }
     try {
       session.value = await api.fetchSession();
     } catch (error) {

@@ -26,13 +26,17 @@ describe('signing in', () => {
       roles: ['engineer'],
     });
     const cookies = answer.headers['set-cookie'] as unknown as string[];
-    expect(cookies.map((line) => line.split('=')[0])).toEqual([access, refresh]);
+    expect(cookies.map((line) => line.split('=')[0])).toEqual([access, refresh, 'trimwick_present']);
     for (const line of cookies) {
-      expect(line).toMatch(/; HttpOnly/);
       expect(line).toMatch(/; SameSite=Strict/);
-      expect(line).toMatch(/; Path=\/api/);
       expect(line).not.toMatch(/; Secure/);
     }
+    for (const line of cookies.slice(0, 2)) {
+      expect(line).toMatch(/; HttpOnly/);
+      expect(line).toMatch(/; Path=\/api/);
+    }
+    // The mark that a page may read tells that there is a session and nothing else.
+    expect(cookies[2]).toMatch(/^trimwick_present=marker; /);
   });
 
   it('marks the cookies Secure behind https', async () => {

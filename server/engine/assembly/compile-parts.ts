@@ -61,12 +61,18 @@ function joinToFace(
   builder.resistance(`${id}.reading.outer`, hotSpot, `face.${face}.outer`, readingKPerW * share);
 }
 
+/** “Plate”, or “Plate lid” where the id says more. */
+function carrierLabel(carrier: ResolvedCarrier): string {
+  const kind = carrier.kind === 'plate' ? 'Plate' : 'Board';
+  return carrier.id.toLowerCase() === carrier.kind ? kind : `${kind} ${carrier.id}`;
+}
+
 function compileCarrier(context: Context, carrier: ResolvedCarrier, partsAreaM2: number): void {
   const { builder, assembly, models, covered, surfaces } = context;
   const { up } = assembly.document.housing.pose;
   const node = `carrier.${carrier.id}.mean`;
   const areaM2 = carrier.sizeM[0] * carrier.sizeM[1];
-  builder.node(node, 'carrier', carrier.kind === 'plate' ? `Plate ${carrier.id}` : `Board ${carrier.id}`, {
+  builder.node(node, 'carrier', carrierLabel(carrier), {
     capacityJPerK: carrier.capacityJPerK,
   });
   const inward = turned(outsideFacing(carrier.face, up));
@@ -84,7 +90,16 @@ function compileCarrier(context: Context, carrier: ResolvedCarrier, partsAreaM2:
   });
   if (carrier.kind === 'plate') {
     covered[carrier.face] += areaM2;
-    joinToFace(context, node, carrier.id, `plate ${carrier.id}`, carrier.face, areaM2, carrier.jointKM2PerW, true);
+    joinToFace(
+      context,
+      node,
+      carrier.id,
+      carrierLabel(carrier).toLowerCase(),
+      carrier.face,
+      areaM2,
+      carrier.jointKM2PerW,
+      true,
+    );
     return;
   }
   if (carrier.standOffM > stillGapM) {
@@ -224,7 +239,7 @@ function compilePart(context: Context, part: ResolvedPart): void {
     filmCoefficient: spreadingFilm,
   });
   const peak = `carrier.${carrier.id}.peak.${part.id}`;
-  builder.node(peak, 'spot', `${carrier.kind === 'plate' ? 'Plate' : 'Board'} ${carrier.id} under ${part.label}`);
+  builder.node(peak, 'spot', `${carrierLabel(carrier)} under ${part.label}`);
   builder.resistance(`${part.id}.joint`, body, peak, part.jointKM2PerW / areaM2);
   builder.resistance(`${part.id}.spreading`, peak, `carrier.${carrier.id}.mean`, spreading.peak);
 }

@@ -164,7 +164,7 @@ export function resolveParts(
         type.electrical.kind === 'heat'
           ? assumptions.fill<number>(part.heatW, `${path}/heatW`, `heat ${part.id}`, {
               ...defaults.heatW,
-              label: `Heat of ${part.name ?? part.id}`,
+              label: `${part.name ?? part.id}, heat`,
             })
           : 0,
       lightKeptShare: isLed
