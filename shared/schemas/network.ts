@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { gridSchema } from './network-grid.js';
 import { bounded, numberOrTable, positive } from './value.js';
 
 /** The open network document, `trimwick-network/1` (see the guide and /api/docs). */
@@ -138,6 +139,8 @@ export const networkDocumentSchema = z
     pressurePa: bounded(1000, 2e6, 'Pa', 'The pressure').default(101325),
     nodes: z.array(nodeSchema).min(1, 'A network needs at least one node').max(20000),
     links: z.array(linkSchema).max(200000).default([]),
+    /** Plates, boards and walls that carry sources. */
+    grids: z.array(gridSchema).max(200).default([]),
     supplies: z.array(supplySchema).max(1000).default([]),
     limits: z.array(limitSchema).max(10000).default([]),
   })

@@ -53,7 +53,7 @@ class DrivenNetwork {
  * one) and its output power. Where the present drive is zero the scale counts in amperes or watts.
  */
 function driveSetter(network: PreparedNetwork, drive: Drive): (scale: number) => void {
-  const { document } = network;
+  const { document, sources } = network;
   if ('supply' in drive) {
     const index = document.supplies.findIndex(({ id }) => id === drive.supply);
     const supply = document.supplies[index];
@@ -63,17 +63,17 @@ function driveSetter(network: PreparedNetwork, drive: Drive): (scale: number) =>
     }
     const base = supply.currentA > 0 ? supply.currentA : 1;
     return (scale) => {
-      network.supplyCurrents[index] = base * scale;
+      sources.supplyCurrents[index] = base * scale;
     };
   }
   const setters = drive.sources.map((id, i) => {
-    const n = network.nodeIndex.get(id);
-    const node = n === undefined ? undefined : document.nodes[n];
+    const node = document.nodes.find((candidate) => candidate.id === id);
     const path = `/drive/sources/${String(i)}`;
-    if (n === undefined || !node || node.fixedC !== undefined) {
+    if (!node || node.fixedC !== undefined) {
       const message = node ? `“${id}” has a fixed temperature and makes no heat` : `There is no node “${id}”`;
       throw new EngineError('unknown-reference', message, [{ path, message, node: id }]);
     }
+    const n = network.numberOf(id);
     const { source, heatW } = node;
     const supply = source?.supply === undefined ? -1 : document.supplies.findIndex((s) => s.id === source.supply);
     const supplyA = document.supplies[supply]?.currentA ?? 0;
@@ -82,10 +82,10 @@ function driveSetter(network: PreparedNetwork, drive: Drive): (scale: number) =>
     // Only a bare node is driven by heat alone, and only there a zero means watts.
     const baseHeat = source ? heatW : heatW === undefined || heatW === 0 ? 1 : heatW;
     return (scale: number) => {
-      if (baseHeat !== undefined) network.givenHeat[n] = baseHeat * scale;
-      if (supply >= 0) network.supplyCurrents[supply] = (supplyA > 0 ? supplyA : 1) * scale;
-      if (ownA !== undefined) network.ownCurrents[n] = (ownA > 0 ? ownA : 1) * scale;
-      if (outputW !== undefined) network.outputs[n] = (outputW > 0 ? outputW : 1) * scale;
+      if (baseHeat !== undefined) sources.givenHeat[n] = baseHeat * scale;
+      if (supply >= 0) sources.supplyCurrents[supply] = (supplyA > 0 ? supplyA : 1) * scale;
+      if (ownA !== undefined) sources.ownCurrents[n] = (ownA > 0 ? ownA : 1) * scale;
+      if (outputW !== undefined) sources.outputs[n] = (outputW > 0 ? outputW : 1) * scale;
     };
   });
   return (scale) => {
@@ -165,13 +165,13 @@ function runawayScale(driven: DrivenNetwork, crossings: readonly Crossing[], hol
 
 function hottestSource(network: PreparedNetwork): string {
   const { nodes } = network.document;
-  let best = 0;
-  nodes.forEach((node, i) => {
-    const better = (node.source ? 1 : 0) - (nodes[best]?.source ? 1 : 0);
-    const hotter = (network.temperatures[i] ?? 0) > (network.temperatures[best] ?? 0);
-    if (better > 0 || (better === 0 && hotter)) best = i;
-  });
-  return nodes[best]?.id ?? '';
+  const kelvin = ({ id }: { id: string }) => network.temperatures[network.numberOf(id)] ?? 0;
+  const [first, ...rest] = nodes;
+  if (!first) return '';
+  return rest.reduce((best, node) => {
+    const better = (node.source ? 1 : 0) - (best.source ? 1 : 0);
+    return better > 0 || (better === 0 && kelvin(node) > kelvin(best)) ? node : best;
+  }, first).id;
 }
 
 /**
@@ -276,7 +276,7 @@ function atZero(
     status: 'exceeded-at-zero',
     scale: 0,
     electricalW: 0,
-    heatW: driven.network.heat.reduce((sum, heat) => sum + heat, 0),
+    heatW: driven.network.sources.heat.reduce((sum, heat) => sum + heat, 0),
     binds: exceeded ? bindsOf(exceeded.reader) : { kind: 'runaway', id: runaway?.node ?? '', node: runaway?.node },
     perLimit: crossings.map(({ reader, high }) => ({ id: reader.id, scale: high === 0 ? 0 : null })),
     range,
@@ -289,9 +289,9 @@ function drawn(driven: DrivenNetwork, drive: Drive, scale: number) {
   driven.solve(scale);
   const { network } = driven;
   const devices = Object.values(deviceAnswers(network, true));
-  const given = network.givenHeat.reduce((sum, heat) => sum + heat, 0);
+  const given = network.sources.givenHeat.reduce((sum, heat) => sum + heat, 0);
   const electricalW = devices.reduce((sum, device) => sum + (device.electricalW ?? device.heatW), given);
-  const heatW = network.heat.reduce((sum, heat) => sum + heat, 0);
+  const heatW = network.sources.heat.reduce((sum, heat) => sum + heat, 0);
   const index = 'supply' in drive ? network.document.supplies.findIndex(({ id }) => id === drive.supply) : -1;
-  return { scale, ...(index >= 0 ? { currentA: network.supplyCurrents[index] ?? 0 } : {}), electricalW, heatW };
+  return { scale, ...(index >= 0 ? { currentA: network.sources.supplyCurrents[index] ?? 0 } : {}), electricalW, heatW };
 }

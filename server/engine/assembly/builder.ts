@@ -1,3 +1,4 @@
+import type { NetworkGrid } from '../../../shared/schemas/network-grid.js';
 import type { NetworkDocument, NetworkLimit, NetworkLink, NetworkNode } from '../../../shared/schemas/network.js';
 import type { Warning } from '../../../shared/schemas/network-answers.js';
 import type { EstimateLimit, nodeRoles } from '../../../shared/schemas/estimate.js';
@@ -30,6 +31,7 @@ const leastResistance = 1e-4;
 export class NetworkBuilder {
   readonly nodes: NetworkNode[] = [];
   readonly links: NetworkLink[] = [];
+  readonly grids: NetworkGrid[] = [];
   readonly limits: NetworkLimit[] = [];
   readonly nodeInfo: NodeInfo[] = [];
   readonly limitInfo: LimitInfo[] = [];
@@ -72,6 +74,7 @@ export class NetworkBuilder {
       pressurePa,
       nodes: this.nodes,
       links: this.links,
+      grids: this.grids,
       supplies,
       limits: this.limits,
     };

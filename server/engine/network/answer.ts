@@ -5,6 +5,7 @@ import { gravity, zeroCelsius } from '../constants.js';
 import type { Correlation } from '../convection/correlation.js';
 import { resistanceAt } from '../devices/resistor.js';
 import { lookUp } from '../tables.js';
+import type { LinkLaw } from './link-laws.js';
 import type { SteadyState } from './newton.js';
 import type { PreparedNetwork } from './prepared.js';
 import { linkName } from './validate.js';
@@ -12,13 +13,15 @@ import { linkName } from './validate.js';
 /** Current, voltage, power, heat and light of every device, by node. */
 export function deviceAnswers(network: PreparedNetwork, stable: boolean): Record<string, DeviceAnswer> {
   const answers: Record<string, DeviceAnswer> = {};
-  const id = (node: number) => network.document.nodes[node]?.id ?? '';
+  const ids = new Map(network.document.nodes.map(({ id }) => [network.numberOf(id), id]));
+  const id = (node: number) => ids.get(node) ?? '';
+  const { sources } = network;
   const ohm = { value: 0, slope: 0 };
-  for (const { node, source, supply } of network.others) {
-    const currentA = (supply >= 0 ? network.supplyCurrents[supply] : network.ownCurrents[node]) ?? 0;
+  for (const { node, source, supply } of sources.others) {
+    const currentA = (supply >= 0 ? sources.supplyCurrents[supply] : sources.ownCurrents[node]) ?? 0;
     if (source.kind === 'converter') {
-      const outputW = network.outputOf(node, source, currentA);
-      const heatW = (network.heat[node] ?? 0) - (network.givenHeat[node] ?? 0);
+      const outputW = sources.outputOf(node, source, currentA);
+      const heatW = (sources.heat[node] ?? 0) - (sources.givenHeat[node] ?? 0);
       answers[id(node)] = { electricalW: outputW + heatW, heatW, ...(supply >= 0 ? { currentA } : {}) };
       continue;
     }
@@ -27,7 +30,7 @@ export function deviceAnswers(network: PreparedNetwork, stable: boolean): Record
     const heatW = currentA * voltageV;
     answers[id(node)] = { currentA, voltageV, electricalW: heatW, heatW, senseV: voltageV };
   }
-  for (const group of network.ledGroups) {
+  for (const group of network.sources.ledGroups) {
     const total = group.shared.currents.reduce((sum, current) => sum + current, 0);
     group.nodes.forEach((node, k) => {
       const state = group.states[k];
@@ -49,21 +52,22 @@ export function deviceAnswers(network: PreparedNetwork, stable: boolean): Record
 
 /** Power that a rating at this node speaks of [W]: of the device, else the given heat. */
 function ratedPower(network: PreparedNetwork, node: number): number {
-  for (const group of network.ledGroups) {
+  for (const group of network.sources.ledGroups) {
     const k = group.nodes.indexOf(node);
     if (k >= 0) return (group.states[k]?.voltage ?? 0) * (group.shared.currents[k] ?? 0);
   }
-  return network.heat[node] ?? 0;
+  return network.sources.heat[node] ?? 0;
 }
 
 function ratedCurrent(network: PreparedNetwork, node: number): number {
-  for (const group of network.ledGroups) {
+  for (const group of network.sources.ledGroups) {
     const k = group.nodes.indexOf(node);
     if (k >= 0) return group.shared.currents[k] ?? 0;
   }
-  const device = network.others.find((other) => other.node === node);
+  const { sources } = network;
+  const device = sources.others.find((other) => other.node === node);
   if (!device) return 0;
-  return (device.supply >= 0 ? network.supplyCurrents[device.supply] : network.ownCurrents[node]) ?? 0;
+  return (device.supply >= 0 ? sources.supplyCurrents[device.supply] : sources.ownCurrents[node]) ?? 0;
 }
 
 /** Least share of a rating that a derating curve is taken to allow, so that a ratio stays a number. */
@@ -80,10 +84,10 @@ export interface LimitReader {
 }
 
 export function limitReader(network: PreparedNetwork, limit: NetworkLimit): LimitReader {
-  const index = (id: string) => network.nodeIndex.get(id) ?? 0;
+  const index = (id: string) => network.numberOf(id);
   if ('maxC' in limit) {
-    const node = index(limit.node);
-    const celsius = () => (network.temperatures[node] ?? 0) - zeroCelsius;
+    const kelvin = network.reader(limit.node);
+    const celsius = () => kelvin() - zeroCelsius;
     return {
       id: limit.id,
       kind: 'temperature',
@@ -102,7 +106,7 @@ export function limitReader(network: PreparedNetwork, limit: NetworkLimit): Limi
   if ('maxA' in limit) {
     const supply = 'supply' in limit ? network.document.supplies.findIndex(({ id }) => id === limit.supply) : -1;
     const current = () =>
-      'supply' in limit ? (network.supplyCurrents[supply] ?? 0) : ratedCurrent(network, index(limit.node));
+      'supply' in limit ? (network.sources.supplyCurrents[supply] ?? 0) : ratedCurrent(network, index(limit.node));
     const where = 'supply' in limit ? { supply: limit.supply } : { node: limit.node };
     return {
       id: limit.id,
@@ -120,9 +124,9 @@ export function limitReader(network: PreparedNetwork, limit: NetworkLimit): Limi
     };
   }
   const node = index(limit.node);
-  const reference = limit.derating ? index(limit.derating.referenceNode) : -1;
-  const allowed = () =>
-    limit.derating ? lookUp(limit.derating.points, (network.temperatures[reference] ?? 0) - zeroCelsius) : 1;
+  const { derating } = limit;
+  const reference = derating ? network.reader(derating.referenceNode) : () => 0;
+  const allowed = () => (derating ? lookUp(derating.points, reference() - zeroCelsius) : 1);
   const used = () => ratedPower(network, node) / limit.maxW;
   return {
     id: limit.id,
@@ -143,60 +147,76 @@ export function limitReader(network: PreparedNetwork, limit: NetworkLimit): Limi
   };
 }
 
+function outsideRange(
+  name: string,
+  { hot, cold, lengthM }: NonNullable<LinkLaw['convective']>,
+  ends: readonly [number, number],
+  pressurePa: number,
+): Warning[] {
+  const [a, b] = ends;
+  const correlation: Correlation = a >= b ? hot : cold;
+  const range = correlation.range.ra;
+  if (!range) return [];
+  filmAir((a + b) / 2, pressurePa, gravity, air);
+  const ra = air.rayleighFactor * Math.abs(a - b) * lengthM ** 3;
+  // Where next to nothing flows, being outside the range changes nothing.
+  if (Math.abs(a - b) < 0.05 || (ra >= range[0] && ra <= range[1])) return [];
+  const message =
+    `${name}: Ra = ${ra.toExponential(1)} lies outside the published range ` +
+    `${range[0].toExponential(0)} … ${range[1].toExponential(0)} of ${correlation.id} (${correlation.shape})`;
+  return [{ code: 'outside-range', link: name, message }];
+}
+
+const air = blankFilmAir();
+
 function rangeWarnings(network: PreparedNetwork): Warning[] {
-  const air = blankFilmAir();
-  const { temperatures, from, to, document } = network;
-  return network.laws.flatMap((law, l) => {
-    if (!law.convective) return [];
-    const a = temperatures[from[l] ?? 0] ?? 0;
-    const b = temperatures[to[l] ?? 0] ?? 0;
-    const link = document.links[l];
-    const correlation: Correlation = a >= b ? law.convective.hot : law.convective.cold;
-    const range = correlation.range.ra;
-    if (!range || !link) return [];
-    filmAir((a + b) / 2, document.pressurePa, gravity, air);
-    const ra = air.rayleighFactor * Math.abs(a - b) * law.convective.lengthM ** 3;
-    // Where next to nothing flows, being outside the range changes nothing.
-    if (Math.abs(a - b) < 0.05 || (ra >= range[0] && ra <= range[1])) return [];
-    const name = linkName(link, l);
-    const message =
-      `${name}: Ra = ${ra.toExponential(1)} lies outside the published range ` +
-      `${range[0].toExponential(0)} … ${range[1].toExponential(0)} of ${correlation.id} (${correlation.shape})`;
-    return [{ code: 'outside-range', link: name, message }];
+  const { temperatures, document, films } = network;
+  const ofLinks = document.links.flatMap((link, l) => {
+    const placed = network.lawOf(l);
+    if (!placed?.law.convective) return [];
+    const ends = [temperatures[placed.from] ?? 0, temperatures[placed.to] ?? 0] as const;
+    return outsideRange(linkName(link, l), placed.law.convective, ends, document.pressurePa);
   });
+  const ofFilms = films.flatMap((film) => {
+    if (!film.law.convective) return [];
+    const airK = temperatures[film.air] ?? 0;
+    return outsideRange(film.id, film.law.convective, [airK + film.excess, airK], document.pressurePa);
+  });
+  return [...ofLinks, ...ofFilms];
 }
 
 /** Heat and light in and out: what sources and warmer fixed nodes give, and where it goes [W]. */
 function heatBalance(network: PreparedNetwork): SolveAnswer['heatBalance'] {
-  const { unknown, flows, from, to, heat } = network;
-  const intoFixed = new Float64Array(network.nodeCount);
-  for (let l = 0; l < flows.length; l++) {
-    const f = from[l] ?? 0;
-    const t = to[l] ?? 0;
-    if ((unknown[f] ?? 0) < 0) intoFixed[f] = (intoFixed[f] ?? 0) - (flows[l] ?? 0);
-    if ((unknown[t] ?? 0) < 0) intoFixed[t] = (intoFixed[t] ?? 0) + (flows[l] ?? 0);
-  }
-  let inW = network.lightOut;
+  const { residual, unknownCount, rows, size } = network;
+  const { heat, lightOut } = network.sources;
+  let inW = lightOut;
   let outW = 0;
-  for (let n = 0; n < network.nodeCount; n++) {
-    if ((unknown[n] ?? 0) >= 0) inW += heat[n] ?? 0;
-    else if ((intoFixed[n] ?? 0) > 0) outW += intoFixed[n] ?? 0;
-    else inW -= intoFixed[n] ?? 0;
+  let largestResidualW = 0;
+  for (let n = 0; n < unknownCount; n++) {
+    inW += heat[n] ?? 0;
+    largestResidualW = Math.max(largestResidualW, Math.abs(residual[n] ?? 0));
   }
-  const largestResidualW = network.residual.reduce((largest, value) => Math.max(largest, Math.abs(value)), 0);
-  return { inW, outW, lightOutW: network.lightOut, largestResidualW };
+  for (let n = rows; n < size; n++) {
+    const taken = -(residual[n] ?? 0);
+    if (taken > 0) outW += taken;
+    else inW -= taken;
+  }
+  return { inW, outW, lightOutW: lightOut, largestResidualW };
 }
 
+/** Temperatures of all nodes, then of all readings of grids. */
 export function temperaturesC(network: PreparedNetwork): Record<string, number> {
-  return Object.fromEntries(
-    network.document.nodes.map(({ id }, i) => [id, (network.temperatures[i] ?? 0) - zeroCelsius]),
-  );
+  const answer: Record<string, number> = {};
+  for (const { id } of network.document.nodes) {
+    answer[id] = (network.temperatures[network.numberOf(id)] ?? 0) - zeroCelsius;
+  }
+  for (const id of network.readingIds) answer[id] = network.reader(id)() - zeroCelsius;
+  return answer;
 }
 
 /** Everything a solved network says. */
 export function networkAnswer(network: PreparedNetwork, state: SteadyState): SolveAnswer {
   const { links, limits } = network.document;
-  const named = links.map((link, l) => [linkName(link, l), l] as const);
   const warnings = rangeWarnings(network);
   if (!state.stable) {
     warnings.push({
@@ -211,13 +231,21 @@ export function networkAnswer(network: PreparedNetwork, state: SteadyState): Sol
         'There is a further steady state that is not stable (arrays in parallel sharing evenly): the slightest mismatch leaves it for the one given here',
     });
   }
+  const flowsW: Record<string, number> = {};
+  const filmCoefficientsWPerM2K: Record<string, number> = {};
+  const note = (name: string, { flow, film }: { flow: number; film?: number }) => {
+    flowsW[name] = flow;
+    if (film !== undefined) filmCoefficientsWPerM2K[name] = film;
+  };
+  links.forEach((link, l) => {
+    note(linkName(link, l), network.linkFlow(l));
+  });
+  for (const surface of network.surfaceFlows()) note(surface.id, surface);
   return {
     converged: true,
     temperaturesC: temperaturesC(network),
-    flowsW: Object.fromEntries(named.map(([name, l]) => [name, network.flows[l] ?? 0])),
-    filmCoefficientsWPerM2K: Object.fromEntries(
-      named.filter(([, l]) => network.laws[l]?.convective).map(([name, l]) => [name, network.films[l] ?? 0]),
-    ),
+    flowsW,
+    filmCoefficientsWPerM2K,
     devices: deviceAnswers(network, state.stable),
     limits: limits.map((limit) => limitReader(network, limit).answer()),
     heatBalance: heatBalance(network),

@@ -1,8 +1,9 @@
 import type { NetworkDocument, NetworkLink } from '../../../shared/schemas/network.js';
+import type { GridSurface } from '../../../shared/schemas/network-grid.js';
 import { blankFilmAir, filmAir } from '../air.js';
 import { gravity, stefanBoltzmann, zeroCelsius } from '../constants.js';
 import type { Correlation, Nusselt } from '../convection/correlation.js';
-import { coldCorrelation, findCorrelation } from '../convection/registry.js';
+import { coldCorrelation, findCorrelation, type ConvectionShape } from '../convection/registry.js';
 import { carriesHeat } from './validate.js';
 
 /** Where a link writes its flow q [W] and the partial derivatives of q [W/K] by the temperatures of its two ends. */
@@ -19,12 +20,17 @@ export interface LinkLaw {
   evaluate: (from: number, to: number, out: FlowOut) => void;
   /** A plain conductance [W/K] near the given temperature, for the first guess. */
   guess: (temperature: number) => number;
+  /** Set where the law is linear: its conductance [W/K], 0 where it carries no heat. */
+  conductance?: number;
+  /** Set where the law is σ F (T₁⁴ − T₂⁴): F [m²]. */
+  radiatingArea?: number;
   /** Set for links with a film coefficient. */
   convective?: { hot: Correlation; cold: Correlation; lengthM: number };
 }
 
 function linear(conductance: number): LinkLaw {
   return {
+    conductance,
     evaluate: (from, to, out) => {
       out.flow = conductance * (from - to);
       out.byFrom = conductance;
@@ -115,8 +121,10 @@ function radiatingArea(link: Extract<NetworkLink, { kind: 'radiation' }>): numbe
 
 /** q = σ A ε (T₁⁴ − T₂⁴). */
 function radiative(link: Extract<NetworkLink, { kind: 'radiation' }>): LinkLaw {
-  const factor = stefanBoltzmann * radiatingArea(link);
+  const area = radiatingArea(link);
+  const factor = stefanBoltzmann * area;
   return {
+    radiatingArea: area,
     evaluate: (from, to, out) => {
       const from2 = from * from;
       const to2 = to * to;
@@ -127,6 +135,14 @@ function radiative(link: Extract<NetworkLink, { kind: 'radiation' }>): LinkLaw {
     },
     guess: (temperature) => 4 * factor * temperature ** 3,
   };
+}
+
+/** The law of one square metre of a gridded surface. */
+export function surfaceLaw(
+  surface: Extract<GridSurface, { kind: 'convection' }>,
+  document: Pick<NetworkDocument, 'pressurePa'>,
+): LinkLaw {
+  return natural({ ...surface, shape: surface.shape as ConvectionShape, from: '', areaM2: 1 }, document.pressurePa);
 }
 
 /** The flow law of one link. A link that cannot carry heat has none: zero. */

@@ -15,6 +15,9 @@ const stepTolerance = 1e-10;
 const residualTolerance = 1e-11;
 /** Rounding that a residual cannot go below, as a multiple of Σ|conductance| × temperature. */
 const rounding = 8 * Number.EPSILON;
+/** From this many unknowns on, a factorisation that still serves well is used again. */
+const worthReusing = 1500;
+const servesWell = 0.1;
 
 export interface SteadyState {
   iterations: number;
@@ -24,35 +27,32 @@ export interface SteadyState {
   leftUnstable?: boolean;
 }
 
+/** All heat that sources make and absorb, and that fixed temperatures take or give [W]. */
 function heatScale(network: PreparedNetwork): number {
+  const { residual, rows, size } = network;
+  const { heat } = network.sources;
   let scale = 1e-9;
-  for (const heat of network.heat) scale += Math.abs(heat);
-  for (let l = 0; l < network.flows.length; l++) {
-    const fixed =
-      (network.unknown[network.from[l] as number] as number) < 0 ||
-      (network.unknown[network.to[l] as number] as number) < 0;
-    if (fixed) scale += Math.abs(network.flows[l] as number);
-  }
+  for (let n = 0; n < size; n++) scale += Math.abs(heat[n] as number);
+  for (let n = rows; n < size; n++) scale += Math.abs(residual[n] as number);
   return scale;
 }
 
 /** Largest residual beyond its tolerance: converged where this is at most 1. */
 function excess(network: PreparedNetwork): number {
+  const { residual, stiffness, temperatures, unknownCount } = network;
   const allowed = residualTolerance * heatScale(network);
   let worst = 0;
-  for (let n = 0; n < network.nodeCount; n++) {
-    const i = network.unknown[n] as number;
-    if (i < 0) continue;
-    const floor = rounding * (network.stiffness[i] as number) * (network.temperatures[n] as number);
-    const value = Math.abs(network.residual[i] as number) / (allowed + floor);
+  for (let i = 0; i < unknownCount; i++) {
+    const floor = rounding * (stiffness[i] as number) * (temperatures[i] as number);
+    const value = Math.abs(residual[i] as number) / (allowed + floor);
     if (!(value <= worst)) worst = value;
   }
   return worst;
 }
 
-function norm(values: Float64Array): number {
+function norm(values: Float64Array, count: number): number {
   let sum = 0;
-  for (let i = 0; i < values.length; i++) sum += (values[i] as number) ** 2;
+  for (let i = 0; i < count; i++) sum += (values[i] as number) ** 2;
   return Math.sqrt(sum);
 }
 
@@ -61,6 +61,8 @@ interface Workspace {
   base: Float64Array;
   step: Float64Array;
   weight: Float64Array;
+  /** The step before this one. */
+  last: Float64Array;
 }
 
 const workspaces = new WeakMap<PreparedNetwork, Workspace>();
@@ -69,65 +71,65 @@ function workspaceOf(network: PreparedNetwork): Workspace {
   let workspace = workspaces.get(network);
   if (!workspace) {
     workspace = {
-      base: new Float64Array(network.nodeCount),
-      step: new Float64Array(network.unknownCount),
+      base: new Float64Array(network.size),
+      step: new Float64Array(network.rows),
       weight: new Float64Array(network.unknownCount),
+      last: new Float64Array(network.unknownCount),
     };
     workspaces.set(network, workspace);
   }
   return workspace;
 }
 
-/** Moves the unknown temperatures by −scale × step from `base`, fenced off from 0 K. Returns the largest move. */
-function move(network: PreparedNetwork, base: Float64Array, step: Float64Array, scale: number): number {
-  let largest = 0;
-  for (let n = 0; n < network.nodeCount; n++) {
-    const i = network.unknown[n] as number;
-    if (i < 0) continue;
-    const before = base[n] as number;
-    const after = Math.max(before - scale * (step[i] as number), coldest);
-    network.temperatures[n] = after;
-    const moved = Math.abs(after - before);
-    if (moved > largest) largest = moved;
+/** Fills `step` with the solution of J step = residual; the rows that only the matrix knows have no residual. */
+function solveForStep(network: PreparedNetwork, step: Float64Array): void {
+  const { residual, unknownCount, rows } = network;
+  for (let i = 0; i < unknownCount; i++) step[i] = residual[i] as number;
+  for (let i = unknownCount; i < rows; i++) step[i] = 0;
+  network.matrix.solve(step);
+}
+
+/** Moves the unknown temperatures by −scale × step from `base`, fenced off from 0 K. */
+function move(network: PreparedNetwork, base: Float64Array, step: Float64Array, scale: number): void {
+  const { temperatures, unknownCount } = network;
+  for (let i = 0; i < unknownCount; i++) {
+    const after = (base[i] as number) - scale * (step[i] as number);
+    temperatures[i] = after > coldest ? after : coldest;
   }
-  return largest;
+  network.project();
 }
 
 /** First guess: the linear network, then a small stagger so that no two neighbours are equally warm. */
 export function firstGuess(network: PreparedNetwork): void {
-  const { temperatures, unknown, matrix, residual } = network;
+  const { temperatures, unknownCount, rows, size } = network;
   let sum = 0;
-  let fixed = 0;
-  for (let n = 0; n < network.nodeCount; n++) {
-    if ((unknown[n] as number) < 0) {
-      sum += temperatures[n] as number;
-      fixed++;
-    }
-  }
-  const mean = sum / Math.max(fixed, 1);
-  for (let n = 0; n < network.nodeCount; n++) if ((unknown[n] as number) >= 0) temperatures[n] = mean;
-  if (network.unknownCount === 0) return;
+  for (let n = rows; n < size; n++) sum += temperatures[n] as number;
+  const mean = sum / Math.max(size - rows, 1);
+  for (let i = 0; i < unknownCount; i++) temperatures[i] = mean;
+  if (unknownCount === 0) return;
   network.linearise(mean + 20);
-  matrix.factor();
-  matrix.solve(residual);
-  for (let n = 0; n < network.nodeCount; n++) {
-    const i = unknown[n] as number;
-    if (i < 0) continue;
-    const guess = Math.min(Math.max(residual[i] as number, coldest), hottest);
-    temperatures[n] = guess + 0.01 * (1 + (i % 7));
+  network.matrix.factor();
+  const { step } = workspaceOf(network);
+  solveForStep(network, step);
+  const stagger = network.isLinear ? 0 : 0.01;
+  for (let i = 0; i < unknownCount; i++) {
+    const guess = Math.min(Math.max(mean - (step[i] as number), coldest), hottest);
+    temperatures[i] = guess + stagger * (1 + (i % 7));
   }
+  network.project();
 }
 
 /** Σ (residual / stiffness)²: how far the nodes are from rest in kelvins, so that a stiff node’s rounding does not hide a soft one. */
 function mismatch(network: PreparedNetwork, weight: Float64Array): number {
+  const { residual } = network;
   let sum = 0;
-  for (let i = 0; i < weight.length; i++) sum += ((network.residual[i] as number) * (weight[i] as number)) ** 2;
+  for (let i = 0; i < weight.length; i++) sum += ((residual[i] as number) * (weight[i] as number)) ** 2;
   return sum;
 }
 
-function largestOf(step: Float64Array): number {
+function largestOf(step: Float64Array, count: number): number {
   let largest = 0;
-  for (let i = 0; i < step.length; i++) {
+  for (let i = 0; i < count; i++) {
     const size = Math.abs(step[i] as number);
     if (!(size <= largest)) largest = size;
   }
@@ -135,27 +137,49 @@ function largestOf(step: Float64Array): number {
 }
 
 /**
+ * The step that would follow, foretold for each node by how its last two compare: by the square of their ratio with a new matrix, by the
+ * ratio itself with an old one. Node by node, since a node near ΔT = 0 of natural convection comes to rest only linearly.
+ */
+function foretoldStep(step: Float64Array, last: Float64Array, newMatrix: boolean): number {
+  let largest = 0;
+  for (let i = 0; i < last.length; i++) {
+    const size = Math.abs(step[i] as number);
+    const before = Math.abs(last[i] as number);
+    const ratio = size < before ? size / before : 1;
+    const next = size * (newMatrix ? ratio * ratio : ratio);
+    if (next > largest) largest = next;
+  }
+  return largest;
+}
+
+/**
  * Newton’s method with a line search on the mismatch. Returns the iterations, or −1 where it got nowhere.
  *
- * It ends where the residual is within its tolerance and the step is within its own, or where rounding lets no step shrink further.
+ * It ends where the residual is within its tolerance and the step that would follow within its own (as the last two steps foretell it:
+ * by their square where the matrix was new, by their ratio where it was not), or where rounding lets no step shrink further.
  */
-function newton(network: PreparedNetwork, { base, step, weight }: Workspace): number {
+function newton(network: PreparedNetwork, { base, step, weight, last }: Workspace): number {
+  const { unknownCount, stiffness } = network;
   network.evaluate();
+  let done = excess(network) <= 1;
+  if (done && network.isLinear) return 1;
   let lastLargest = Infinity;
+  let ratio = 1;
   for (let iteration = 1; iteration <= mostIterations; iteration++) {
-    const done = excess(network) <= 1;
-    for (let i = 0; i < weight.length; i++) weight[i] = 1 / Math.max(network.stiffness[i] as number, 1e-15);
+    for (let i = 0; i < unknownCount; i++) {
+      const s = stiffness[i] as number;
+      weight[i] = 1 / (s > 1e-15 ? s : 1e-15);
+    }
     const before = mismatch(network, weight);
     base.set(network.temperatures);
-    step.set(network.residual);
-    network.matrix.factor();
-    network.matrix.solve(step);
-    const largest = largestOf(step);
+    const reuse = unknownCount >= worthReusing && ratio < servesWell && iteration > 1;
+    if (!reuse) network.matrix.factor();
+    solveForStep(network, step);
+    const largest = largestOf(step, unknownCount);
     if (!Number.isFinite(before) || !Number.isFinite(largest)) return -1;
     if (done && largest <= stepTolerance) return iteration;
     // Within the tolerance already: full steps, as long as each is shorter than the last.
     if (done && largest >= 0.9 * lastLargest) return iteration;
-    lastLargest = largest;
     let scale = largest > largestStep ? largestStep / largest : 1;
     let accepted = false;
     for (let halving = 0; halving < mostHalvings; halving++) {
@@ -170,8 +194,15 @@ function newton(network: PreparedNetwork, { base, step, weight }: Workspace): nu
     if (!accepted) {
       network.temperatures.set(base);
       network.evaluate();
-      return -1;
+      if (!reuse) return -1;
+      ratio = 1;
+      continue;
     }
+    done = excess(network) <= 1;
+    ratio = largest / lastLargest;
+    if (done && scale === 1 && iteration > 1 && foretoldStep(step, last, !reuse) <= stepTolerance) return iteration;
+    for (let i = 0; i < unknownCount; i++) last[i] = step[i] as number;
+    lastLargest = largest;
   }
   return excess(network) <= 1 ? mostIterations : -1;
 }
@@ -181,21 +212,21 @@ function newton(network: PreparedNetwork, { base, step, weight }: Workspace): nu
  * near a state that a warm-up reaches. Returns the steps, or −1.
  */
 function transient(network: PreparedNetwork, { base, step }: Workspace): number {
+  const { unknownCount } = network;
   network.evaluate();
   let pace = 0;
-  for (let i = 0; i < network.unknownCount; i++) pace = Math.max(pace, network.stiffness[i] as number);
+  for (let i = 0; i < unknownCount; i++) pace = Math.max(pace, network.stiffness[i] as number);
   pace = Math.max(pace, 1e-9);
   for (let steps = 1; steps <= mostTransientSteps; steps++) {
-    const before = norm(network.residual);
+    const before = norm(network.residual, unknownCount);
     base.set(network.temperatures);
-    step.set(network.residual);
     const { diagonal } = network.matrix;
-    for (let i = 0; i < diagonal.length; i++) diagonal[i] = (diagonal[i] as number) + pace;
+    for (let i = 0; i < unknownCount; i++) diagonal[i] = (diagonal[i] as number) + pace;
     network.matrix.factor();
-    network.matrix.solve(step);
-    const largest = largestOf(step);
+    solveForStep(network, step);
+    const largest = largestOf(step, unknownCount);
     if (!Number.isFinite(largest)) return -1;
-    if (network.matrix.negativePivots > 0 || largest > 50) {
+    if (network.matrix.negativePivots > network.expectedNegativePivots || largest > 50) {
       // Too long a step: it would leap over the state that a warm-up reaches.
       pace *= 4;
       network.temperatures.set(base);
@@ -205,9 +236,9 @@ function transient(network: PreparedNetwork, { base, step }: Workspace): number 
     }
     move(network, base, step, 1);
     network.evaluate();
-    for (const temperature of network.temperatures) if (temperature > hottest * 1.05) return -1;
+    for (let i = 0; i < unknownCount; i++) if ((network.temperatures[i] as number) > hottest * 1.05) return -1;
     if (largest < 1e-6 && excess(network) < 1e6) return steps;
-    const after = norm(network.residual);
+    const after = norm(network.residual, unknownCount);
     pace *= Math.min(Math.max(after / before, 0.1), 1.5) * 0.7;
   }
   return -1;
@@ -215,20 +246,20 @@ function transient(network: PreparedNetwork, { base, step }: Workspace): number 
 
 /** Sets one array of each shared supply a little warmer, so that an unstable equal share is left. */
 function stagger(network: PreparedNetwork): void {
-  for (const { nodes } of network.ledGroups) {
+  for (const { nodes } of network.sources.ledGroups) {
     nodes.forEach((node, k) => {
       network.temperatures[node] = (network.temperatures[node] as number) + 5 / (k + 1);
     });
   }
 }
 
-function factorHere(network: PreparedNetwork): boolean {
-  network.matrix.factor();
-  return network.matrix.negativePivots === 0;
+/** Of the matrix as it was last factored, within the last step of the answer. */
+function isStable(network: PreparedNetwork): boolean {
+  return network.matrix.negativePivots === network.expectedNegativePivots;
 }
 
 /**
- * Solves for the steady state from the network’s present temperatures (see `firstGuess`), leaving temperatures, flows and devices as
+ * Solves for the steady state from the network’s present temperatures (see `firstGuess`), leaving temperatures and devices as
  * of the answer.
  *
  * Newton first; where it fails, or ends in a state that the slightest push would leave, a pseudo-transient warm-up
@@ -243,40 +274,46 @@ export function solveSteady(network: PreparedNetwork): SteadyState {
   }
   const workspace = workspaceOf(network);
   let iterations = newton(network, workspace);
-  let stable = iterations > 0 && factorHere(network);
-  if (iterations > 0 && stable) {
+  if (iterations > 0 && isStable(network)) {
     refuseTooHot(network);
-    return { iterations, stable };
+    return { iterations, stable: true };
   }
-  const found = iterations > 0 ? Float64Array.from(network.temperatures) : null;
+  const found = iterations > 0;
   const spent = Math.max(iterations, 0);
   if (found) stagger(network);
   else firstGuess(network);
   const steps = transient(network, workspace);
   iterations = newton(network, workspace);
   if (iterations > 0) {
-    stable = factorHere(network);
     refuseTooHot(network);
-    return { iterations: spent + Math.max(steps, 0) + iterations, stable, leftUnstable: found !== null };
+    return {
+      iterations: spent + Math.max(steps, 0) + iterations,
+      stable: isStable(network),
+      leftUnstable: found,
+    };
   }
-  const extreme = network.temperatures.some((t) => !(t < hottest) || t <= coldest * 1.001);
+  let extreme = false;
+  for (let i = 0; i < network.unknownCount; i++) {
+    const t = network.temperatures[i] as number;
+    if (!(t < hottest) || t <= coldest * 1.001) extreme = true;
+  }
   if (extreme || steps < 0) throw runaway(network);
   throw new EngineError('not-converged', 'The network did not come to rest: no steady state was found');
 }
 
 function unknownNodes(network: PreparedNetwork) {
-  return network.document.nodes.flatMap((node, i) =>
-    (network.unknown[i] as number) < 0
-      ? []
-      : [
-          {
-            id: node.id,
-            t: network.temperatures[i] as number,
-            heat: network.heat[i] as number,
-            source: node.source !== undefined,
-          },
-        ],
-  );
+  return network.document.nodes.flatMap((node) => {
+    if (node.fixedC !== undefined) return [];
+    const n = network.numberOf(node.id);
+    return [
+      {
+        id: node.id,
+        t: network.temperatures[n] as number,
+        heat: network.sources.heat[n] as number,
+        source: node.source !== undefined,
+      },
+    ];
+  });
 }
 
 /** What runs away: of the nodes with a source the hottest, else the hottest of all; a cooler that nothing can feed is named as such. */
@@ -290,14 +327,14 @@ function runaway(network: PreparedNetwork): EngineError {
   const message = cooled
     ? `“${node}” takes away more heat than can reach it above 0 K`
     : `“${node}” runs away: there is no steady state below ${String(hottest)} K at this drive`;
-  const i = network.nodeIndex.get(node) as number;
+  const i = network.document.nodes.findIndex(({ id }) => id === node);
   return new EngineError(cooled ? 'outside-range' : 'runaway', message, [
     { path: `/nodes/${String(i)}`, message, node },
   ]);
 }
 
 function refuseTooHot(network: PreparedNetwork): void {
-  for (let n = 0; n < network.nodeCount; n++) {
-    if ((network.unknown[n] as number) >= 0 && !((network.temperatures[n] as number) < hottest)) throw runaway(network);
+  for (let i = 0; i < network.unknownCount; i++) {
+    if (!((network.temperatures[i] as number) < hottest)) throw runaway(network);
   }
 }

@@ -1,314 +1,390 @@
-import type { NetworkDocument, NetworkSource } from '../../../shared/schemas/network.js';
+import type { NetworkDocument, NetworkLink } from '../../../shared/schemas/network.js';
+import type { GridSurface, NetworkGrid } from '../../../shared/schemas/network-grid.js';
 import { zeroCelsius } from '../constants.js';
-import { converterLoss, type ConverterSource } from '../devices/converter.js';
-import { blankLedState, ledState, type LedSource, type LedState } from '../devices/led.js';
-import { resistanceAt } from '../devices/resistor.js';
-import { SharedSupply } from '../devices/sharing.js';
-import { linkLaw, type FlowOut, type LinkLaw } from './link-laws.js';
+import { CellFilm } from './cell-films.js';
+import { GeneralLinks } from './general-links.js';
+import {
+  freeCells,
+  intervals,
+  overlaps,
+  placeGrids,
+  rectangleCells,
+  shares,
+  type PlacedGrid,
+} from './grid-block.js';
+import { LinearLinks, RadiativeLinks, type System } from './link-arrays.js';
+import { linkLaw, surfaceLaw } from './link-laws.js';
+import { Pairs } from './pairs.js';
+import { Patches } from './patches.js';
+import { Sources } from './sources.js';
 import { SparseLu } from './sparse/lu.js';
 import { validateNetwork } from './validate.js';
 
-/** Arrays on one supply; a lone one, or one with a current of its own, is a group of one. */
-interface LedGroup {
-  nodes: Int32Array;
-  leds: LedSource[];
-  /** Index of the supply, −1 for a current of its own. */
-  supply: number;
-  shared: SharedSupply;
-  kelvin: Float64Array;
-  states: LedState[];
+/** Where a link of the document went. */
+type LinkPlace = { kind: 'none' } | { kind: 'linear' | 'radiative' | 'general'; at: number };
+
+/** A named mean or highest temperature of cells. */
+interface Reading {
+  cells: Int32Array;
+  /** Shares of a mean; `null` for the highest. */
+  weights: Float64Array | null;
 }
 
-interface OtherDevice {
-  node: number;
-  source: Exclude<NetworkSource, { kind: 'led' }>;
-  supply: number;
-}
+/** What a gridded surface’s own link is made of, to report its flow: a film over cells, or a stretch of linear or radiative links. */
+type SurfacePlace =
+  | { kind: 'film'; film: CellFilm }
+  | { kind: 'linear' | 'radiative'; from: number; to: number; areaM2: number; coefficient: number };
 
 /**
- * A network ready to be solved, and solved again with other drives: structure, order and workspace are made once;
- * `evaluate` allocates nothing.
+ * A network ready to be solved, and solved again with other drives: structure, order and workspace are made once; `evaluate` allocates
+ * nothing.
  *
- * Temperatures are in kelvin, in the order of the document’s nodes.
+ * Numbering: first the unknown temperatures (nodes, then cells of grids), then the rows that only the matrix knows
+ * (multipliers of patches, mean excesses of gridded films), then the fixed temperatures. Temperatures in kelvin.
  */
-export class PreparedNetwork {
-  readonly nodeCount: number;
-  readonly nodeIndex: ReadonlyMap<string, number>;
-  /** Position of each node among the unknown temperatures; −1 for a fixed one. */
-  readonly unknown: Int32Array;
+export class PreparedNetwork implements System {
+  /** Unknown temperatures; rows of the matrix; all numbers. */
   readonly unknownCount: number;
+  readonly rows: number;
+  readonly size: number;
   readonly temperatures: Float64Array;
-  /** Heat leaving each unknown node through links less what is put into it [W]. */
+  /** Heat leaving each node through links less what is put into it [W]; at a fixed node less what flows into it. */
   readonly residual: Float64Array;
-  /** Σ |conductance| at each unknown node [W/K], for the rounding floor. */
+  /** Σ |conductance| at each node [W/K], for the rounding floor. */
   readonly stiffness: Float64Array;
   readonly matrix: SparseLu;
-  readonly laws: readonly LinkLaw[];
-  readonly from: Int32Array;
-  readonly to: Int32Array;
-  readonly flows: Float64Array;
-  /** Film coefficient of convective links [W/(m² K)], else 0. */
-  readonly films: Float64Array;
-  /** What the drive varies: currents of supplies, sources’ own currents (by node), and given heats (by node). */
-  readonly supplyCurrents: Float64Array;
-  readonly ownCurrents: Float64Array;
-  readonly givenHeat: Float64Array;
-  /** Output power of converters that have one of their own [W], by node. */
-  readonly outputs: Float64Array;
-  /** Heat that each node makes or absorbs [W], light absorbed included, as of the last `evaluate`. */
-  readonly heat: Float64Array;
-  /** Light that leaves the network [W]. */
-  lightOut = 0;
-  readonly ledGroups: readonly LedGroup[];
-  readonly others: readonly OtherDevice[];
+  readonly sources: Sources;
+  readonly films: CellFilm[] = [];
+  readonly grids: readonly PlacedGrid[];
+  /** Negative pivots of a stable network: one per patch. */
+  readonly expectedNegativePivots: number;
+  /** True where no law bends and no device answers to temperature. */
+  readonly isLinear: boolean;
 
-  private readonly lightTo: Int32Array[][];
-  private readonly lightShare: Float64Array[][];
-  private readonly slotFromTo: Int32Array;
-  private readonly slotToFrom: Int32Array;
-  private readonly out: FlowOut = { flow: 0, byFrom: 0, byTo: 0, film: 0 };
-  private readonly ohm = { value: 0, slope: 0 };
+  private readonly index = new Map<string, number>();
+  private readonly linear = new LinearLinks();
+  private readonly radiative = new RadiativeLinks();
+  private readonly general = new GeneralLinks();
+  private readonly patches = new Patches();
+  private readonly places: LinkPlace[];
+  private readonly surfaces = new Map<string, SurfacePlace>();
+  private readonly readings = new Map<string, Reading>();
+  private readonly baseDiagonal: Float64Array;
+  private readonly baseOffDiagonal: Float64Array;
 
   /** @throws EngineError when the document cannot be solved as it stands */
   constructor(readonly document: NetworkDocument) {
     validateNetwork(document);
-    const { nodes, links, supplies } = document;
-    this.nodeCount = nodes.length;
-    this.nodeIndex = new Map(nodes.map(({ id }, i) => [id, i]));
-    const index = (id: string) => this.nodeIndex.get(id) as number;
-    this.unknown = new Int32Array(nodes.length);
+    const { nodes, links, grids } = document;
     let count = 0;
-    nodes.forEach((node, i) => (this.unknown[i] = node.fixedC === undefined ? count++ : -1));
+    for (const node of nodes) if (node.fixedC === undefined) this.index.set(node.id, count++);
+    this.grids = placeGrids(grids, count);
+    for (const { mesh } of this.grids) count += mesh.cellCount;
     this.unknownCount = count;
-    this.temperatures = Float64Array.from(nodes, (node) => (node.fixedC ?? 25) + zeroCelsius);
-    this.givenHeat = Float64Array.from(nodes, (node) => node.heatW ?? 0);
-    this.outputs = Float64Array.from(nodes, ({ source }) => (source?.kind === 'converter' ? (source.outputW ?? 0) : 0));
-    this.heat = new Float64Array(nodes.length);
-    this.residual = new Float64Array(count);
-    this.stiffness = new Float64Array(count);
-    this.from = Int32Array.from(links, (link) => index(link.from));
-    this.to = Int32Array.from(links, (link) => index(link.to));
-    this.laws = links.map((link) => linkLaw(link, document));
-    this.flows = new Float64Array(links.length);
-    this.films = new Float64Array(links.length);
-    this.supplyCurrents = Float64Array.from(supplies, ({ currentA }) => currentA);
-    this.ownCurrents = Float64Array.from(nodes, ({ source }) =>
-      source && source.kind !== 'converter' ? (source.currentA ?? 0) : 0,
+    // Multipliers, then the rows of films; pairs ask for the number of rows only when all are known.
+    const patchCount = grids.reduce((sum, { patches, free }) => sum + patches.length + Object.keys(free).length, 0);
+    const filmCount = grids.reduce(
+      (sum, { surfaces }) => sum + surfaces.filter(({ kind }) => kind === 'convection').length,
+      0,
     );
+    this.rows = count + patchCount + filmCount;
+    this.size = this.rows;
+    for (const node of nodes) if (node.fixedC !== undefined) this.index.set(node.id, this.size++);
+    this.temperatures = new Float64Array(this.size).fill(zeroCelsius + 25);
+    for (const node of nodes) {
+      if (node.fixedC !== undefined) this.temperatures[this.numberOf(node.id)] = node.fixedC + zeroCelsius;
+    }
+    this.residual = new Float64Array(this.size);
+    this.stiffness = new Float64Array(this.size);
 
-    const supplyIndex = new Map(supplies.map(({ id }, i) => [id, i]));
-    const groups = new Map<string, { nodes: number[]; leds: LedSource[]; supply: number }>();
-    const others: OtherDevice[] = [];
-    nodes.forEach(({ source, id }, i) => {
-      if (!source) return;
-      const supply = source.supply === undefined ? -1 : (supplyIndex.get(source.supply) as number);
-      if (source.kind !== 'led') {
-        others.push({ node: i, source, supply });
-        return;
+    const pairs = new Pairs(() => this.rows);
+    this.places = links.map((link) => this.placeLink(link, pairs));
+    let nextRow = this.unknownCount;
+    const late: number[] = [];
+    for (const placed of this.grids) nextRow = this.placePatches(placed, nextRow, pairs, late);
+    late.push(...this.patches.nodes);
+    for (const placed of this.grids) {
+      this.placeCells(placed, pairs);
+      for (const surface of placed.grid.surfaces) {
+        if (surface.kind === 'convection') late.push(nextRow);
+        nextRow = this.placeSurface(placed, surface, nextRow, pairs);
       }
-      const key = source.supply === undefined ? `own ${id}` : `supply ${source.supply}`;
-      const group = groups.get(key) ?? { nodes: [], leds: [], supply };
-      group.nodes.push(i);
-      group.leds.push(source);
-      groups.set(key, group);
-    });
-    this.others = others;
-    this.ledGroups = [...groups.values()].map((group) => ({
-      nodes: Int32Array.from(group.nodes),
-      leds: group.leds,
-      supply: group.supply,
-      shared: new SharedSupply(group.leds),
-      kelvin: new Float64Array(group.nodes.length),
-      states: group.leds.map(blankLedState),
-    }));
-    this.lightTo = this.ledGroups.map(({ leds }) =>
-      leds.map((led) => Int32Array.from(led.light, ({ node }) => index(node))),
-    );
-    this.lightShare = this.ledGroups.map(({ leds }) =>
-      leds.map((led) => Float64Array.from(led.light, ({ share }) => share)),
-    );
+    }
+    this.placeJoins(pairs);
+    this.sources = new Sources(document, (id) => this.numberOf(id), this.size, pairs);
 
-    this.matrix = new SparseLu(count, this.structure());
-    const slot = (row: number, column: number) => {
-      const i = this.unknown[row] as number;
-      const j = this.unknown[column] as number;
-      return i < 0 || j < 0 ? -1 : this.matrix.slot(i, j);
+    this.matrix = new SparseLu(this.rows, pairs.toArray(), late, this.size - this.rows);
+    pairs.bind(this.matrix);
+    for (const part of [this.linear, this.radiative, this.general, this.sources, ...this.films]) part.bind(pairs);
+    this.baseDiagonal = new Float64Array(this.matrix.diagonal.length);
+    this.baseOffDiagonal = new Float64Array(this.matrix.offDiagonal.length);
+    this.linear.addMatrix(this.baseDiagonal, this.baseOffDiagonal);
+    this.patches.addMatrix(this.baseOffDiagonal, pairs);
+    this.expectedNegativePivots = patchCount;
+    this.isLinear =
+      this.radiative.length === 0 && this.general.laws.length === 0 && this.films.length === 0 && !this.sources.any;
+    for (const placed of this.grids) this.placeReadings(placed);
+  }
+
+  /** Number of a node of the document. */
+  numberOf(id: string): number {
+    return this.index.get(id) as number;
+  }
+
+  private placeLink(link: NetworkLink, pairs: Pairs): LinkPlace {
+    const law = linkLaw(link, this.document);
+    const from = this.numberOf(link.from);
+    const to = this.numberOf(link.to);
+    if (law.conductance !== undefined) {
+      if (law.conductance === 0) return { kind: 'none' };
+      return { kind: 'linear', at: this.linear.add(from, to, law.conductance, pairs) };
+    }
+    if (law.radiatingArea !== undefined) {
+      return { kind: 'radiative', at: this.radiative.add(from, to, law.radiatingArea, pairs) };
+    }
+    return { kind: 'general', at: this.general.add(from, to, law, pairs) };
+  }
+
+  private placePatches(placed: PlacedGrid, row: number, pairs: Pairs, late: number[]): number {
+    const { grid } = placed;
+    let next = row;
+    const add = (node: string, found: { cells: Int32Array; areas: Float64Array; sum: number }) => {
+      late.push(next);
+      this.patches.add(this.numberOf(node), next++, found.cells, shares(found.areas, found.sum), pairs);
     };
-    this.slotFromTo = Int32Array.from(links, (_, l) => slot(this.from[l] as number, this.to[l] as number));
-    this.slotToFrom = Int32Array.from(links, (_, l) => slot(this.to[l] as number, this.from[l] as number));
-  }
-
-  /** Which unknowns meet in an equation: ends of a link; arrays on one supply with each other and with what their light heats. */
-  private structure(): [number, number][] {
-    const pairs: [number, number][] = [];
-    const join = (a: number, b: number) => {
-      const i = this.unknown[a] as number;
-      const j = this.unknown[b] as number;
-      if (i >= 0 && j >= 0 && i !== j) pairs.push([i, j]);
-    };
-    for (let l = 0; l < this.from.length; l++) join(this.from[l] as number, this.to[l] as number);
-    this.ledGroups.forEach((group, g) => {
-      const touched = new Set<number>(group.nodes);
-      this.lightTo[g]?.forEach((nodes) => nodes.forEach((node) => touched.add(node)));
-      for (const a of touched) for (const b of group.nodes) join(a, b);
-    });
-    return pairs;
-  }
-
-  /** Fills residual, flows and the matrix ∂residual/∂T at the present temperatures. */
-  evaluate(): void {
-    const { temperatures, unknown, residual, stiffness, matrix, out, from, to } = this;
-    const { diagonal, offDiagonal } = matrix;
-    residual.fill(0);
-    stiffness.fill(0);
-    diagonal.fill(0);
-    offDiagonal.fill(0);
-    for (let l = 0; l < from.length; l++) {
-      const f = from[l] as number;
-      const t = to[l] as number;
-      out.film = 0;
-      (this.laws[l] as LinkLaw).evaluate(temperatures[f] as number, temperatures[t] as number, out);
-      this.flows[l] = out.flow;
-      this.films[l] = out.film;
-      const i = unknown[f] as number;
-      const j = unknown[t] as number;
-      if (i >= 0) {
-        residual[i] = (residual[i] as number) + out.flow;
-        diagonal[i] = (diagonal[i] as number) + out.byFrom;
-        stiffness[i] = (stiffness[i] as number) + Math.abs(out.byFrom);
-      }
-      if (j >= 0) {
-        residual[j] = (residual[j] as number) - out.flow;
-        diagonal[j] = (diagonal[j] as number) - out.byTo;
-        stiffness[j] = (stiffness[j] as number) + Math.abs(out.byTo);
-      }
-      const a = this.slotFromTo[l] as number;
-      if (a >= 0) {
-        const b = this.slotToFrom[l] as number;
-        offDiagonal[a] = (offDiagonal[a] as number) + out.byTo;
-        offDiagonal[b] = (offDiagonal[b] as number) - out.byFrom;
-      }
+    for (const patch of grid.patches) add(patch.node, rectangleCells(placed, patch.side, patch));
+    for (const side of ['near', 'far'] as const) {
+      const node = grid.free[side];
+      if (node === undefined) continue;
+      const free = freeCells(placed, side);
+      // Nothing of the side is bare: then the node stands for all of it.
+      add(node, free.sum > 0 ? free : rectangleCells(placed, side));
     }
-    this.evaluateHeat();
-    for (let n = 0; n < this.nodeCount; n++) {
-      const i = unknown[n] as number;
-      if (i >= 0) residual[i] = (residual[i] as number) - (this.heat[n] as number);
+    return next;
+  }
+
+  private placeCells({ grid, mesh, base }: PlacedGrid, pairs: Pairs): void {
+    for (let l = 0; l < mesh.first.length; l++) {
+      this.linear.add(
+        base + (mesh.first[l] as number),
+        base + (mesh.second[l] as number),
+        mesh.conductance[l] as number,
+        pairs,
+      );
     }
-  }
-
-  private evaluateHeat(): void {
-    const { heat, givenHeat, unknown, matrix, temperatures, ohm } = this;
-    heat.set(givenHeat);
-    for (const device of this.others) {
-      const current =
-        device.supply >= 0 ? (this.supplyCurrents[device.supply] as number) : (this.ownCurrents[device.node] as number);
-      if (device.source.kind === 'converter') {
-        heat[device.node] =
-          (heat[device.node] as number) +
-          converterLoss(device.source, this.outputOf(device.node, device.source, current));
-        continue;
-      }
-      resistanceAt(device.source, temperatures[device.node] as number, ohm);
-      heat[device.node] = (heat[device.node] as number) + current * current * ohm.value;
-      const i = unknown[device.node] as number;
-      matrix.diagonal[i] = (matrix.diagonal[i] as number) - current * current * ohm.slope;
-    }
-    this.lightOut = 0;
-    for (let g = 0; g < this.ledGroups.length; g++) this.evaluateGroup(g);
-  }
-
-  /** Output power of a converter [W]: its own, or output voltage × its supply’s current. */
-  outputOf(node: number, converter: ConverterSource, current: number): number {
-    return converter.outputW === undefined ? (converter.outputV ?? 0) * current : (this.outputs[node] as number);
-  }
-
-  private evaluateGroup(g: number): void {
-    const group = this.ledGroups[g] as LedGroup;
-    const { nodes, leds, shared, kelvin, states } = group;
-    const { heat, temperatures } = this;
-    const m = nodes.length;
-    for (let k = 0; k < m; k++) kelvin[k] = temperatures[nodes[k] as number] as number;
-    shared.share(
-      group.supply >= 0
-        ? (this.supplyCurrents[group.supply] as number)
-        : (this.ownCurrents[nodes[0] as number] as number),
-      kelvin,
-    );
-    for (let k = 0; k < m; k++) {
-      const state = states[k] as LedState;
-      ledState(leds[k] as LedSource, kelvin[k] as number, shared.currents[k] as number, state);
-      const node = nodes[k] as number;
-      heat[node] = (heat[node] as number) + state.heat;
-      let leaving = 1;
-      const targets = this.lightTo[g]?.[k] as Int32Array;
-      const shares = this.lightShare[g]?.[k] as Float64Array;
-      for (let p = 0; p < targets.length; p++) {
-        const share = shares[p] as number;
-        leaving -= share;
-        heat[targets[p] as number] = (heat[targets[p] as number] as number) + share * state.light;
-      }
-      this.lightOut += Math.max(leaving, 0) * state.light;
-      for (let j = 0; j < m; j++) {
-        const byI = shared.byTemperature[k * m + j] as number;
-        const self = k === j ? 1 : 0;
-        const column = nodes[j] as number;
-        this.addHeatSlope(node, column, state.heatByI * byI + self * state.heatByT);
-        const lightSlope = state.lightByI * byI + self * state.lightByT;
-        for (let p = 0; p < targets.length; p++) {
-          this.addHeatSlope(targets[p] as number, column, (shares[p] as number) * lightSlope);
+    for (const { edge, near, far, resistanceKMPerW } of grid.edges) {
+      const ends = [this.numberOf(near), this.numberOf(far)] as const;
+      for (const { i, j, from, to } of mesh.alongEdge(edge)) {
+        for (let k = 0; k < mesh.nz; k++) {
+          // Each plane goes to the node of its half; a single plane to both.
+          const targets = mesh.nz === 1 ? ends : [2 * k < mesh.nz ? ends[0] : ends[1]];
+          const half = mesh.halfCellToEdge(i, j, k, edge);
+          const beyond = resistanceKMPerW * Math.max(mesh.nz, 2);
+          for (const target of targets) {
+            const own = mesh.nz === 1 ? 2 / half : 1 / half;
+            this.linear.add(base + mesh.cell(i, j, k), target, (to - from) / (own + beyond), pairs);
+          }
         }
       }
     }
   }
 
-  /** Heat of `row` depends on the temperature of `column`. */
-  private addHeatSlope(row: number, column: number, slope: number): void {
-    if (slope === 0) return;
-    const i = this.unknown[row] as number;
-    const j = this.unknown[column] as number;
-    if (i < 0 || j < 0) return;
-    const { diagonal, offDiagonal } = this.matrix;
-    if (i === j) diagonal[i] = (diagonal[i] as number) - slope;
-    else {
-      const slot = this.matrix.slot(i, j);
-      offDiagonal[slot] = (offDiagonal[slot] as number) - slope;
+  private placeSurface(placed: PlacedGrid, surface: GridSurface, row: number, pairs: Pairs): number {
+    const { cells, areas, sum } = freeCells(placed, surface.side);
+    const to = this.numberOf(surface.to);
+    if (surface.kind === 'convection') {
+      if (sum > 0) {
+        const film = new CellFilm(surface.id, surfaceLaw(surface, this.document), cells, areas, to, row, pairs);
+        this.films.push(film);
+        this.surfaces.set(surface.id, { kind: 'film', film });
+      } else this.linear.add(row, row, 1, pairs);
+      return row + 1;
+    }
+    const links = surface.kind === 'film' ? this.linear : this.radiative;
+    const factor = surface.kind === 'film' ? surface.coefficientWPerM2K : surface.emissivity * surface.areaFactor;
+    const from = links.length;
+    if (factor > 0) cells.forEach((cell, c) => links.add(cell, to, factor * (areas[c] as number), pairs));
+    this.surfaces.set(surface.id, {
+      kind: surface.kind === 'film' ? 'linear' : 'radiative',
+      from,
+      to: links.length,
+      areaM2: sum,
+      coefficient: factor,
+    });
+    return row;
+  }
+
+  private placeJoins(pairs: Pairs): void {
+    const byId = new Map(this.grids.map((placed) => [placed.grid.id, placed]));
+    for (const placed of this.grids) {
+      for (const join of placed.grid.joins) {
+        const other = byId.get(join.grid) as PlacedGrid;
+        const shared = overlaps(placed, join.side, other, join.gridSide, join);
+        const from = this.linear.length;
+        for (const { a, b, area } of shared) this.linear.add(a, b, area / join.resistanceKM2PerW, pairs);
+        const areaM2 = shared.reduce((sum, { area }) => sum + area, 0);
+        this.surfaces.set(join.id, {
+          kind: 'linear',
+          from,
+          to: this.linear.length,
+          areaM2,
+          coefficient: 1 / join.resistanceKM2PerW,
+        });
+        if (join.emissivity === 0) continue;
+        const first = this.radiative.length;
+        for (const { a, b, area } of shared) this.radiative.add(a, b, join.emissivity * area, pairs);
+        this.surfaces.set(`${join.id}.radiation`, {
+          kind: 'radiative',
+          from: first,
+          to: this.radiative.length,
+          areaM2,
+          coefficient: join.emissivity,
+        });
+      }
+      for (const { edge, grid, gridEdge } of placed.grid.edgeJoins) {
+        this.placeEdgeJoin(placed, edge, byId.get(grid) as PlacedGrid, gridEdge, pairs);
+      }
     }
   }
 
-  /** A plain linear network at about these temperatures, written into the matrix: for the first guess. */
-  linearise(temperature: number): void {
-    const { unknown, residual, matrix, temperatures, from, to } = this;
-    matrix.diagonal.fill(0);
-    matrix.offDiagonal.fill(0);
-    this.evaluateHeat();
-    // Only the heats are wanted, at their present temperature.
-    matrix.diagonal.fill(0);
-    matrix.offDiagonal.fill(0);
+  private placeEdgeJoin(
+    a: PlacedGrid,
+    edge: NetworkGrid['edgeJoins'][number]['edge'],
+    b: PlacedGrid,
+    bEdge: NetworkGrid['edgeJoins'][number]['gridEdge'],
+    pairs: Pairs,
+  ): void {
+    const along = (placed: PlacedGrid, which: typeof edge) =>
+      which === 'x0' || which === 'x1' ? placed.mesh.ys : placed.mesh.xs;
+    const cellsA = a.mesh.alongEdge(edge);
+    const cellsB = b.mesh.alongEdge(bEdge);
+    const planes = Math.max(a.mesh.nz, b.mesh.nz);
+    for (const { a: p, b: q, length } of intervals(along(a, edge), along(b, bEdge), 0)) {
+      const cellA = cellsA[p] as (typeof cellsA)[number];
+      const cellB = cellsB[q] as (typeof cellsB)[number];
+      for (let k = 0; k < planes; k++) {
+        const kA = Math.min(k, a.mesh.nz - 1);
+        const kB = Math.min(k, b.mesh.nz - 1);
+        const half =
+          (planes / a.mesh.nz) / a.mesh.halfCellToEdge(cellA.i, cellA.j, kA, edge) +
+          (planes / b.mesh.nz) / b.mesh.halfCellToEdge(cellB.i, cellB.j, kB, bEdge);
+        this.linear.add(
+          a.base + a.mesh.cell(cellA.i, cellA.j, kA),
+          b.base + b.mesh.cell(cellB.i, cellB.j, kB),
+          length / half,
+          pairs,
+        );
+      }
+    }
+  }
+
+  private placeReadings(placed: PlacedGrid): void {
+    for (const { id, side, what, over } of placed.grid.readings) {
+      const { cells, areas, sum } = rectangleCells(placed, side, over);
+      this.readings.set(id, { cells, weights: what === 'mean' ? shares(areas, sum) : null });
+    }
+  }
+
+  /** Names of the readings, in order. */
+  get readingIds(): IterableIterator<string> {
+    return this.readings.keys();
+  }
+
+  /** Reads the temperature of a node or a reading [K]. */
+  reader(id: string): () => number {
+    const reading = this.readings.get(id);
+    const { temperatures } = this;
+    if (!reading) {
+      const n = this.numberOf(id);
+      return () => temperatures[n] as number;
+    }
+    const { cells, weights } = reading;
+    return () => {
+      let value = weights ? 0 : -Infinity;
+      for (let c = 0; c < cells.length; c++) {
+        const t = temperatures[cells[c] as number] as number;
+        if (weights) value += (weights[c] as number) * t;
+        else if (t > value) value = t;
+      }
+      return value;
+    };
+  }
+
+  /** Fills residual and the matrix ∂residual/∂T at the present temperatures. */
+  evaluate(): void {
+    const { residual, stiffness, matrix, temperatures } = this;
     residual.fill(0);
-    for (let l = 0; l < from.length; l++) {
-      const g = (this.laws[l] as LinkLaw).guess(temperature);
-      const f = from[l] as number;
-      const t = to[l] as number;
-      const i = unknown[f] as number;
-      const j = unknown[t] as number;
-      if (i >= 0) {
-        matrix.diagonal[i] = (matrix.diagonal[i] as number) + g;
-        if (j < 0) residual[i] = (residual[i] as number) + g * (temperatures[t] as number);
-      }
-      if (j >= 0) {
-        matrix.diagonal[j] = (matrix.diagonal[j] as number) + g;
-        if (i < 0) residual[j] = (residual[j] as number) + g * (temperatures[f] as number);
-      }
-      const a = this.slotFromTo[l] as number;
-      if (a >= 0) {
-        const b = this.slotToFrom[l] as number;
-        matrix.offDiagonal[a] = (matrix.offDiagonal[a] as number) - g;
-        matrix.offDiagonal[b] = (matrix.offDiagonal[b] as number) - g;
-      }
-    }
-    for (let n = 0; n < this.nodeCount; n++) {
-      const i = unknown[n] as number;
-      if (i >= 0) residual[i] = (residual[i] as number) + (this.heat[n] as number);
-    }
+    stiffness.set(this.baseDiagonal);
+    matrix.diagonal.set(this.baseDiagonal);
+    matrix.offDiagonal.set(this.baseOffDiagonal);
+    this.linear.addResidual(this);
+    this.radiative.evaluate(this);
+    this.general.evaluate(this);
+    for (let f = 0; f < this.films.length; f++) (this.films[f] as CellFilm).evaluate(this);
+    this.sources.evaluate(temperatures, matrix);
+    this.takeOffHeat();
+    this.patches.distribute(this);
+  }
+
+  /** A plain linear network at about one temperature [K], written into residual and matrix: for the first guess. */
+  linearise(kelvin: number): void {
+    const { residual, matrix, temperatures } = this;
+    residual.fill(0);
+    // Only the heats are wanted of the sources: the matrix is made afterwards.
+    this.sources.evaluate(temperatures, matrix);
+    matrix.diagonal.set(this.baseDiagonal);
+    matrix.offDiagonal.set(this.baseOffDiagonal);
+    this.linear.addResidual(this);
+    this.radiative.linearise(this, kelvin);
+    this.general.linearise(this, kelvin);
+    for (const film of this.films) film.linearise(this, kelvin);
+    this.takeOffHeat();
+    this.patches.distribute(this);
+  }
+
+  private takeOffHeat(): void {
+    const { residual, sources } = this;
+    for (let n = 0; n < this.size; n++) residual[n] = (residual[n] as number) - (sources.heat[n] as number);
+  }
+
+  /** Sets nodes that stand for means to the means of their cells: to be called after the temperatures have been moved. */
+  project(): void {
+    this.patches.project(this.temperatures);
+  }
+
+  /** Flow of a link of the document at the present temperatures [W], and its film coefficient where it has one. */
+  linkFlow(link: number): { flow: number; film?: number } {
+    const place = this.places[link] as LinkPlace;
+    const { temperatures } = this;
+    if (place.kind === 'none') return { flow: 0 };
+    const links = place.kind === 'linear' ? this.linear : place.kind === 'radiative' ? this.radiative : this.general;
+    const a = temperatures[links.from[place.at] as number] as number;
+    const b = temperatures[links.to[place.at] as number] as number;
+    if (place.kind === 'linear') return { flow: (this.linear.factor[place.at] as number) * (a - b) };
+    if (place.kind === 'radiative') return { flow: this.radiative.flow(place.at, temperatures) };
+    const out = { flow: 0, byFrom: 0, byTo: 0, film: 0 };
+    const law = this.general.laws[place.at];
+    law?.evaluate(a, b, out);
+    return law?.convective ? { flow: out.flow, film: out.film } : { flow: out.flow };
+  }
+
+  /** The law of a link that has a film coefficient or a range, with its ends. */
+  lawOf(link: number) {
+    const place = this.places[link] as LinkPlace;
+    if (place.kind !== 'general') return undefined;
+    const law = this.general.laws[place.at];
+    return law && { law, from: this.general.from[place.at] as number, to: this.general.to[place.at] as number };
+  }
+
+  /** Flows of gridded surfaces and joins [W], with film coefficients where they have one. */
+  surfaceFlows(): { id: string; flow: number; film?: number }[] {
+    const { temperatures } = this;
+    return [...this.surfaces].map(([id, place]) => {
+      if (place.kind === 'film') return { id, flow: place.film.flow(temperatures), film: place.film.film };
+      const links = place.kind === 'linear' ? this.linear : this.radiative;
+      let flow = 0;
+      for (let l = place.from; l < place.to; l++) flow += links.flow(l, temperatures);
+      return { id, flow };
+    });
   }
 }

@@ -19,13 +19,15 @@ export function withSecondCorrelations(document: NetworkDocument): NetworkDocume
 
 /** Sets every drive of the network to a share of what its document says. */
 function scaleAll(network: PreparedNetwork, share: number): void {
-  const { document } = network;
-  document.supplies.forEach(({ currentA }, i) => (network.supplyCurrents[i] = currentA * share));
-  document.nodes.forEach(({ heatW, source }, i) => {
-    network.givenHeat[i] = (heatW ?? 0) * share;
-    if (source?.kind === 'converter') network.outputs[i] = (source.outputW ?? 0) * share;
-    else if (source) network.ownCurrents[i] = (source.currentA ?? 0) * share;
-  });
+  const { document, sources } = network;
+  document.supplies.forEach(({ currentA }, i) => (sources.supplyCurrents[i] = currentA * share));
+  for (const { id, heatW, source } of document.nodes) {
+    if (heatW === undefined && !source) continue;
+    const n = network.numberOf(id);
+    sources.givenHeat[n] = (heatW ?? 0) * share;
+    if (source?.kind === 'converter') sources.outputs[n] = (source.outputW ?? 0) * share;
+    else if (source) sources.ownCurrents[n] = (source.currentA ?? 0) * share;
+  }
 }
 
 /** The largest share of the present drives at which there still is a steady state, to a part in a thousand. */
