@@ -1,3 +1,5 @@
+import { tabulated, type WithSlope } from '../hermite.js';
+
 /** What a correlation gives: Nu, and its two slopes for Newton’s method. */
 export interface Nusselt {
   nu: number;
@@ -44,29 +46,46 @@ export function thickLayer(thin: number, c: number, out: { value: number; slope:
   out.slope = (c * c) / (log * log * thin * (thin + c));
 }
 
-/** (a^n + b^n)^(1/n) with its slopes by a and b, safe for zero and for large n. */
+/** Prandtl numbers that the tables of this folder cover: air’s own, 150 … 1500 K, with room on both sides. */
+const prandtlRange = [0.55, 0.95] as const;
+
+/** A function of Pr alone, made fast: outside the table’s range it is computed as it stands. */
+export function ofPrandtl(exact: WithSlope): WithSlope {
+  return tabulated(exact, prandtlRange, 200);
+}
+
+/** r^n for the small whole powers that blends use. */
+function wholePower(r: number, n: number): number {
+  let result = 1;
+  for (let square = r, rest = n; rest > 0; rest >>= 1, square *= square) if (rest & 1) result *= square;
+  return result;
+}
+
+/** (a^n + b^n)^(1/n) with its slopes by a and b, n a whole number, safe for zero and for large n. */
 export function powerSum(a: number, b: number, n: number, out: { value: number; byA: number; byB: number }): void {
-  const greater = Math.max(a, b);
+  const greater = a > b ? a : b;
   if (greater <= 0) {
     out.value = 0;
     out.byA = 0;
     out.byB = 0;
     return;
   }
-  const ra = (a / greater) ** n;
-  const rb = (b / greater) ** n;
-  const root = (ra + rb) ** (1 / n);
+  const lesser = a > b ? b : a;
+  const ratio = lesser / greater;
+  const power = wholePower(ratio, n);
+  const root = Math.exp(Math.log1p(power) / n);
+  const byGreater = root / (1 + power);
+  const byLesser = lesser > 0 ? (byGreater * power) / ratio : 0;
   out.value = greater * root;
-  const factor = root / (ra + rb);
-  out.byA = a > 0 ? (factor * ra * greater) / a : 0;
-  out.byB = b > 0 ? (factor * rb * greater) / b : 0;
+  out.byA = a > b ? byGreater : byLesser;
+  out.byB = a > b ? byLesser : byGreater;
 }
 
 /**
  * C̄_l of Raithby & Hollands and its slope by Pr: 0.671/[1 + (0.492/Pr)^(9/16)]^(4/9).
  */
-export function laminarCoefficient(pr: number, out: { value: number; slope: number }): void {
+export const laminarCoefficient: WithSlope = ofPrandtl((pr, out) => {
   const x = (0.492 / pr) ** (9 / 16);
   out.value = 0.671 / (1 + x) ** (4 / 9);
   out.slope = (out.value * (4 / 9) * (9 / 16) * x) / ((1 + x) * pr);
-}
+});

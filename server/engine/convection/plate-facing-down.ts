@@ -1,6 +1,14 @@
-import { thickLayer, type Correlation, type Nusselt } from './correlation.js';
+import { ofPrandtl, thickLayer, type Correlation, type Nusselt } from './correlation.js';
 
 const thick = { value: 0, slope: 0 };
+const coefficient = { value: 0, slope: 0 };
+
+/** 0.527/[1 + (1.9/Pr)^0.9]^(2/9) of Raithby & Hollands. */
+const thinCoefficient = ofPrandtl((pr, out) => {
+  const x = (1.9 / pr) ** 0.9;
+  out.value = 0.527 / (1 + x) ** (2 / 9);
+  out.slope = (out.value * (2 / 9) * 0.9 * x) / ((1 + x) * pr);
+});
 
 /**
  * Natural convection of a hot plate that looks down (or a cold one that looks up).
@@ -12,12 +20,13 @@ const thick = { value: 0, slope: 0 };
  * **Checked against** a second computation in high precision, tests/reference/raithby-hollands.
  */
 export function nusseltPlateFacingDownRaithbyHollands(ra: number, pr: number, out: Nusselt): void {
-  const x = (1.9 / pr) ** 0.9;
-  const thin = (0.527 * ra ** 0.2) / (1 + x) ** (2 / 9);
+  thinCoefficient(pr, coefficient);
+  const fifth = ra ** 0.2;
+  const thin = coefficient.value * fifth;
   thickLayer(thin, 2.45, thick);
   out.nu = thick.value;
   out.byLogRa = (thick.slope * thin) / 5;
-  out.byPr = (thick.slope * thin * (2 / 9) * 0.9 * x) / ((1 + x) * pr);
+  out.byPr = thick.slope * coefficient.slope * fifth;
 }
 
 /**
@@ -28,7 +37,7 @@ export function nusseltPlateFacingDownRaithbyHollands(ra: number, pr: number, ou
  * **Checked against** a second computation, tests/reference/mcadams-1954.
  */
 export function nusseltPlateFacingDownMcAdams(ra: number, _pr: number, out: Nusselt): void {
-  out.nu = 0.27 * ra ** 0.25;
+  out.nu = 0.27 * Math.sqrt(Math.sqrt(ra));
   out.byLogRa = out.nu / 4;
   out.byPr = 0;
 }

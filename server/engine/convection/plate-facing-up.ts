@@ -15,7 +15,7 @@ const sum = { value: 0, byA: 0, byB: 0 };
  */
 export function nusseltPlateFacingUpRaithbyHollands(ra: number, pr: number, out: Nusselt): void {
   laminarCoefficient(pr, laminar);
-  const quarter = 0.835 * ra ** 0.25;
+  const quarter = 0.835 * Math.sqrt(Math.sqrt(ra));
   thickLayer(laminar.value * quarter, 1.4, thick);
   const turbulent = 0.14 * Math.cbrt(ra);
   powerSum(thick.value, turbulent, 10, sum);
@@ -40,7 +40,7 @@ const halfBlend = Math.log(3);
  */
 export function nusseltPlateFacingUpLloydMoran(ra: number, _pr: number, out: Nusselt): void {
   out.byPr = 0;
-  const low = 0.54 * ra ** 0.25;
+  const low = 0.54 * Math.sqrt(Math.sqrt(ra));
   const high = 0.15 * Math.cbrt(ra);
   const x = ra > 0 ? (Math.log(ra) - joint + halfBlend) / (2 * halfBlend) : 0;
   const u = Math.min(1, Math.max(0, x));
