@@ -98,7 +98,10 @@ export const gridSchema = z.strictObject({
     .max(40)
     .default([]),
   /** Conduction over an edge into the edge of another grid that runs the same way. */
-  edgeJoins: z.array(z.strictObject({ edge, grid: idSchema, gridEdge: edge })).max(40).default([]),
+  edgeJoins: z
+    .array(z.strictObject({ edge, grid: idSchema, gridEdge: edge }))
+    .max(40)
+    .default([]),
   /** Named temperatures: the mean or the highest of a side, or of a rectangle on it. */
   readings: z
     .array(

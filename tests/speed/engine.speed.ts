@@ -1,7 +1,4 @@
-import { estimateAssembly } from '../../server/engine/answers/estimate.js';
-import { compileAssembly } from '../../server/engine/assembly/compile.js';
-import { resolveAssembly } from '../../server/engine/assembly/resolve.js';
-import { solveNetwork } from '../../server/engine/network/solve.js';
+import { compileAssembly, estimateAssembly, resolveAssembly, solveNetwork } from './built.js';
 import { bySlug, readDemo, readRuleSets } from '../data/files.js';
 import { spreadOf } from './quantiles.js';
 

@@ -1,6 +1,4 @@
-import { firstGuess, solveSteady } from '../../server/engine/network/newton.js';
-import { PreparedNetwork } from '../../server/engine/network/prepared.js';
-import { solveNetwork } from '../../server/engine/network/solve.js';
+import { firstGuess, PreparedNetwork, solveNetwork, solveSteady } from './built.js';
 import { boardNetwork, boxNetwork } from './networks.js';
 import { spreadOf } from './quantiles.js';
 
@@ -16,8 +14,18 @@ function timed(work: () => unknown, times: number): number[] {
 
 const box = boxNetwork();
 console.log(`box, ${String(box.nodes.length)} nodes, ${String(box.links.length)} links`);
-console.log(`  cold, document to temperatures:  ${spreadOf(timed(() => coldTemperatures(box), 4000), 3)}`);
-console.log(`  cold, document to all answers:   ${spreadOf(timed(() => solveNetwork(box), 4000), 3)}`);
+console.log(
+  `  cold, document to temperatures:  ${spreadOf(
+    timed(() => coldTemperatures(box), 4000),
+    3,
+  )}`,
+);
+console.log(
+  `  cold, document to all answers:   ${spreadOf(
+    timed(() => solveNetwork(box), 4000),
+    3,
+  )}`,
+);
 console.log(`  warm:                            ${spreadOf(timed(warm(box), 4000), 3)}`);
 
 function coldTemperatures(document: typeof box) {

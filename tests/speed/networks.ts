@@ -86,7 +86,14 @@ export function boxNetwork(): NetworkDocument {
     const junction = `junction.${String(p % 6)}`;
     links.push({ kind: 'resistance', from: `case.${String(p)}`, to: junction, resistanceKPerW: 12 });
     if (p < 4) {
-      links.push({ kind: 'convection', from: `case.${String(p)}`, to: 'air', shape: 'vertical-plate', areaM2: 1e-4, lengthM: 0.01 });
+      links.push({
+        kind: 'convection',
+        from: `case.${String(p)}`,
+        to: 'air',
+        shape: 'vertical-plate',
+        areaM2: 1e-4,
+        lengthM: 0.01,
+      });
     }
   }
   while (links.length < 144) {
@@ -113,7 +120,14 @@ export function boardNetwork(side: number): NetworkDocument {
       if (i > 0) links.push({ ...sheet, from: name(i - 1, j), to: name(i, j) });
       if (j > 0) links.push({ ...sheet, from: name(i, j - 1), to: name(i, j) });
       links.push(
-        { kind: 'convection', from: name(i, j), to: 'room', shape: 'vertical-plate', areaM2: 2 * cell ** 2, lengthM: 0.16 },
+        {
+          kind: 'convection',
+          from: name(i, j),
+          to: 'room',
+          shape: 'vertical-plate',
+          areaM2: 2 * cell ** 2,
+          lengthM: 0.16,
+        },
         { kind: 'radiation', from: name(i, j), to: 'room', areaM2: 2 * cell ** 2, emissivity: 0.9 },
       );
     }

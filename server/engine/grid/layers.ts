@@ -73,7 +73,10 @@ function divide(thickness: number, side: number, depth: number): number[] {
 }
 
 /** Conductance along each plane, as sheet conductance k t [W/K], and through each gap per area [W/(m² K)]. */
-export function planeConductances(planes: Planes, layers: readonly GridLayer[]): { sheet: number[]; through: number[] } {
+export function planeConductances(
+  planes: Planes,
+  layers: readonly GridLayer[],
+): { sheet: number[]; through: number[] } {
   const at = (layer: number) => layers[layer] as GridLayer;
   return {
     sheet: planes.carried.map((parts) =>

@@ -94,7 +94,8 @@ export function gridLines(
     );
     let x = a.at;
     sizes.forEach((size, i) => {
-      for (let r = 1; r <= refine; r++) lines.push(i === sizes.length - 1 && r === refine ? b.at : x + (size * r) / refine);
+      for (let r = 1; r <= refine; r++)
+        lines.push(i === sizes.length - 1 && r === refine ? b.at : x + (size * r) / refine);
       x += size;
     });
   }

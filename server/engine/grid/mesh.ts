@@ -62,11 +62,13 @@ export class Mesh {
         cell: Math.min(decay, Math.min(...patch.sizeM) / cellsAcross),
         source: true,
       })),
-      ...footprints.map((foot) => ({ ...along(foot, axis), cell: Math.min(decay, foot.cell ?? Infinity), source: false })),
+      ...footprints.map((foot) => ({
+        ...along(foot, axis),
+        cell: Math.min(decay, foot.cell ?? Infinity),
+        source: false,
+      })),
       ...grid.zones.map((zone) => ({ ...along(zone, axis), cell: decay, source: false })),
-      ...grid.readings.flatMap(({ over }) =>
-        over ? [{ ...along(over, axis), cell: Infinity, source: false }] : [],
-      ),
+      ...grid.readings.flatMap(({ over }) => (over ? [{ ...along(over, axis), cell: Infinity, source: false }] : [])),
       ...(grid.nearWithinM
         ? [{ from: grid.nearWithinM[axis], to: grid.nearWithinM[axis + 2] as number, cell: Infinity, source: false }]
         : []),

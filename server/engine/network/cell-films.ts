@@ -21,10 +21,10 @@ export class CellFilm {
   private readonly airHandles: number[];
   private readonly rowHandles: number[];
   private readonly airRowHandle: number;
-  private cellAir = new Int32Array(0);
-  private airCell = new Int32Array(0);
-  private cellRow = new Int32Array(0);
-  private rowCell = new Int32Array(0);
+  private cellAir: Int32Array = new Int32Array(0);
+  private airCell: Int32Array = new Int32Array(0);
+  private cellRow: Int32Array = new Int32Array(0);
+  private rowCell: Int32Array = new Int32Array(0);
   private airRow = 0;
   private rowAir = 0;
   private readonly out: FlowOut = { flow: 0, byFrom: 0, byTo: 0, film: 0 };
@@ -49,10 +49,10 @@ export class CellFilm {
   }
 
   bind(pairs: Pairs): void {
-    this.cellAir = Int32Array.from(this.airHandles, (handle) => pairs.forward(handle));
-    this.airCell = Int32Array.from(this.airHandles, (handle) => pairs.backward(handle));
-    this.cellRow = Int32Array.from(this.rowHandles, (handle) => pairs.forward(handle));
-    this.rowCell = Int32Array.from(this.rowHandles, (handle) => pairs.backward(handle));
+    this.cellAir = pairs.forwardSlots(this.airHandles);
+    this.airCell = pairs.backwardSlots(this.airHandles);
+    this.cellRow = pairs.forwardSlots(this.rowHandles);
+    this.rowCell = pairs.backwardSlots(this.rowHandles);
     this.airRow = pairs.forward(this.airRowHandle);
     this.rowAir = pairs.backward(this.airRowHandle);
   }

@@ -8,8 +8,8 @@ export class GeneralLinks {
   readonly from: number[] = [];
   readonly to: number[] = [];
   private readonly handles: number[] = [];
-  private forward = new Int32Array(0);
-  private backward = new Int32Array(0);
+  private forward: Int32Array = new Int32Array(0);
+  private backward: Int32Array = new Int32Array(0);
   private readonly out: FlowOut = { flow: 0, byFrom: 0, byTo: 0, film: 0 };
 
   add(from: number, to: number, law: LinkLaw, pairs: Pairs): number {
@@ -21,8 +21,8 @@ export class GeneralLinks {
   }
 
   bind(pairs: Pairs): void {
-    this.forward = Int32Array.from(this.handles, (handle) => pairs.forward(handle));
-    this.backward = Int32Array.from(this.handles, (handle) => pairs.backward(handle));
+    this.forward = pairs.forwardSlots(this.handles);
+    this.backward = pairs.backwardSlots(this.handles);
   }
 
   evaluate({ temperatures, residual, stiffness, matrix }: System): void {

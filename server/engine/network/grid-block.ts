@@ -33,7 +33,8 @@ export function placeGrids(grids: readonly NetworkGrid[], firstCell: number): Pl
       grid,
       feet.map(({ foot }) => foot),
     );
-    const of = (side: 'near' | 'far'): Rectangle[] => feet.filter((entry) => entry.side === side).map(({ foot }) => foot);
+    const of = (side: 'near' | 'far'): Rectangle[] =>
+      feet.filter((entry) => entry.side === side).map(({ foot }) => foot);
     const placed: PlacedGrid = {
       grid,
       mesh,
@@ -106,11 +107,7 @@ export function overlaps(
 }
 
 /** Which intervals of two sets of lines overlap, and over what length [m]; the second set is shifted. */
-export function intervals(
-  a: Float64Array,
-  b: Float64Array,
-  shift: number,
-): { a: number; b: number; length: number }[] {
+export function intervals(a: Float64Array, b: Float64Array, shift: number): { a: number; b: number; length: number }[] {
   const found: { a: number; b: number; length: number }[] = [];
   let i = 0;
   let j = 0;

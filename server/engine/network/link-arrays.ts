@@ -16,11 +16,11 @@ abstract class LinkArrays {
   protected readonly tos: number[] = [];
   protected readonly factors: number[] = [];
   private readonly handles: number[] = [];
-  from = new Int32Array(0);
-  to = new Int32Array(0);
+  from: Int32Array = new Int32Array(0);
+  to: Int32Array = new Int32Array(0);
   factor = new Float64Array(0);
-  protected forward = new Int32Array(0);
-  protected backward = new Int32Array(0);
+  protected forward: Int32Array = new Int32Array(0);
+  protected backward: Int32Array = new Int32Array(0);
 
   /** @returns its position among the links of this law */
   add(from: number, to: number, factor: number, pairs: Pairs): number {
@@ -32,11 +32,11 @@ abstract class LinkArrays {
   }
 
   bind(pairs: Pairs): void {
-    this.from = Int32Array.from(this.froms);
-    this.to = Int32Array.from(this.tos);
-    this.factor = Float64Array.from(this.factors);
-    this.forward = Int32Array.from(this.handles, (handle) => pairs.forward(handle));
-    this.backward = Int32Array.from(this.handles, (handle) => pairs.backward(handle));
+    this.from = new Int32Array(this.froms);
+    this.to = new Int32Array(this.tos);
+    this.factor = new Float64Array(this.factors);
+    this.forward = pairs.forwardSlots(this.handles);
+    this.backward = pairs.backwardSlots(this.handles);
   }
 
   get length(): number {

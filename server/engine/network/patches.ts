@@ -44,7 +44,8 @@ export class Patches {
       const cells = this.cells[p] as Int32Array;
       const weights = this.weights[p] as Float64Array;
       let mean = 0;
-      for (let c = 0; c < cells.length; c++) mean += (weights[c] as number) * (temperatures[cells[c] as number] as number);
+      for (let c = 0; c < cells.length; c++)
+        mean += (weights[c] as number) * (temperatures[cells[c] as number] as number);
       temperatures[this.nodes[p] as number] = mean;
     }
   }

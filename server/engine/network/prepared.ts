@@ -3,15 +3,7 @@ import type { GridSurface, NetworkGrid } from '../../../shared/schemas/network-g
 import { zeroCelsius } from '../constants.js';
 import { CellFilm } from './cell-films.js';
 import { GeneralLinks } from './general-links.js';
-import {
-  freeCells,
-  intervals,
-  overlaps,
-  placeGrids,
-  rectangleCells,
-  shares,
-  type PlacedGrid,
-} from './grid-block.js';
+import { freeCells, intervals, overlaps, placeGrids, rectangleCells, shares, type PlacedGrid } from './grid-block.js';
 import { LinearLinks, RadiativeLinks, type System } from './link-arrays.js';
 import { linkLaw, surfaceLaw } from './link-laws.js';
 import { Pairs } from './pairs.js';
@@ -97,7 +89,7 @@ export class PreparedNetwork implements System {
     this.residual = new Float64Array(this.size);
     this.stiffness = new Float64Array(this.size);
 
-    const pairs = new Pairs(() => this.rows);
+    const pairs = new Pairs(this.rows);
     this.places = links.map((link) => this.placeLink(link, pairs));
     let nextRow = this.unknownCount;
     const late: number[] = [];
@@ -266,8 +258,8 @@ export class PreparedNetwork implements System {
         const kA = Math.min(k, a.mesh.nz - 1);
         const kB = Math.min(k, b.mesh.nz - 1);
         const half =
-          (planes / a.mesh.nz) / a.mesh.halfCellToEdge(cellA.i, cellA.j, kA, edge) +
-          (planes / b.mesh.nz) / b.mesh.halfCellToEdge(cellB.i, cellB.j, kB, bEdge);
+          planes / a.mesh.nz / a.mesh.halfCellToEdge(cellA.i, cellA.j, kA, edge) +
+          planes / b.mesh.nz / b.mesh.halfCellToEdge(cellB.i, cellB.j, kB, bEdge);
         this.linear.add(
           a.base + a.mesh.cell(cellA.i, cellA.j, kA),
           b.base + b.mesh.cell(cellB.i, cellB.j, kB),

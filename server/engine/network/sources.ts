@@ -130,8 +130,7 @@ export class Sources {
         device.supply >= 0 ? (this.supplyCurrents[device.supply] as number) : (this.ownCurrents[device.node] as number);
       const { node } = device;
       if (device.source.kind === 'converter') {
-        heat[node] =
-          (heat[node] as number) + converterLoss(device.source, this.outputOf(node, device.source, current));
+        heat[node] = (heat[node] as number) + converterLoss(device.source, this.outputOf(node, device.source, current));
         continue;
       }
       resistanceAt(device.source, temperatures[node] as number, ohm);

@@ -1,5 +1,6 @@
-import type { NetworkDocument, NetworkLink, NetworkSource } from '../../../shared/schemas/network.js';
+import type { NetworkDocument, NetworkLink, NetworkNode, NetworkSource } from '../../../shared/schemas/network.js';
 import { correlations, findCorrelation } from '../convection/registry.js';
+import { checkGrids, joinGrids } from './validate-grids.js';
 import { EngineError, type EngineErrorCode, type FieldError } from '../errors.js';
 
 /** Name of a link: its id, or `link-3` by position. */
@@ -28,7 +29,7 @@ export function carriesHeat(link: NetworkLink): boolean {
   }
 }
 
-class Findings {
+export class Findings {
   readonly list: { code: EngineErrorCode; error: FieldError }[] = [];
 
   add(code: EngineErrorCode, error: FieldError): void {
@@ -36,8 +37,8 @@ class Findings {
   }
 }
 
-function checkNodes(document: NetworkDocument, findings: Findings): Set<string> {
-  const ids = new Set<string>();
+function checkNodes(document: NetworkDocument, findings: Findings): Map<string, number> {
+  const ids = new Map<string, number>();
   document.nodes.forEach((node, i) => {
     const path = `/nodes/${String(i)}`;
     if (ids.has(node.id)) {
@@ -47,7 +48,7 @@ function checkNodes(document: NetworkDocument, findings: Findings): Set<string> 
         node: node.id,
       });
     }
-    ids.add(node.id);
+    ids.set(node.id, i);
     const heated = (node.heatW ?? 0) !== 0 || node.source !== undefined;
     if (node.fixedC !== undefined && heated) {
       findings.add('heat-into-fixed', {
@@ -60,9 +61,9 @@ function checkNodes(document: NetworkDocument, findings: Findings): Set<string> 
   return ids;
 }
 
-function checkLink(link: NetworkLink, index: number, nodes: ReadonlySet<string>, findings: Findings): void {
+function checkLink(link: NetworkLink, index: number, nodes: ReadonlyMap<string, number>, findings: Findings): void {
   const path = `/links/${String(index)}`;
-  const name = linkName(link, index);
+  const name = link.id ?? linkName(link, index);
   for (const end of ['from', 'to'] as const) {
     if (!nodes.has(link[end])) {
       findings.add('unknown-reference', {
@@ -103,7 +104,7 @@ function checkSource(
   source: NetworkSource,
   node: string,
   path: string,
-  known: { nodes: ReadonlySet<string>; supplies: ReadonlySet<string>; fixed: ReadonlySet<string> },
+  known: { nodes: ReadonlyMap<string, number>; supplies: ReadonlySet<string>; fixed: ReadonlySet<string> },
   findings: Findings,
 ): void {
   if (source.supply !== undefined && !known.supplies.has(source.supply)) {
@@ -152,7 +153,7 @@ function checkSource(
 
 function checkLimits(
   document: NetworkDocument,
-  known: { nodes: ReadonlySet<string>; supplies: ReadonlySet<string> },
+  known: { nodes: ReadonlyMap<string, number>; readings: ReadonlySet<string>; supplies: ReadonlySet<string> },
   findings: Findings,
 ): void {
   const ids = new Set<string>();
@@ -172,7 +173,7 @@ function checkLimits(
       ['node', limit.node],
       ['derating/referenceNode', reference],
     ] as const) {
-      if (id === undefined || known.nodes.has(id)) continue;
+      if (id === undefined || known.nodes.has(id) || known.readings.has(id)) continue;
       findings.add('unknown-reference', { path: `${path}/${key}`, message: `There is no node “${id}”`, node: id });
     }
     if ('maxA' in limit || 'maxW' in limit) {
@@ -185,21 +186,45 @@ function checkLimits(
   });
 }
 
-/** Nodes from which no chain of links that carry heat leads to a fixed temperature. */
-function withoutPath(document: NetworkDocument): string[] {
-  const parent = new Map<string, string>(document.nodes.map(({ id }) => [id, id]));
-  const root = (id: string): string => {
-    let at = id;
-    while (parent.get(at) !== at) {
-      const up = parent.get(at) as string;
-      parent.set(at, parent.get(up) as string);
+function checkLinkNames(links: readonly NetworkLink[], findings: Findings): void {
+  const named = links.filter(({ id }) => id !== undefined).length;
+  // Names by position differ from each other.
+  if (named === 0) return;
+  const names = new Set<string>();
+  links.forEach((link, i) => {
+    const name = linkName(link, i);
+    if (names.has(name)) {
+      const message = `Two links have the id “${name}”`;
+      findings.add('duplicate-id', { path: `/links/${String(i)}/id`, message, link: name });
+    }
+    names.add(name);
+  });
+}
+
+/** Positions of the nodes, then of the grids, from which no chain of links that carry heat leads to a fixed temperature. */
+function withoutPath(document: NetworkDocument, nodes: ReadonlyMap<string, number>): number[] {
+  const count = document.nodes.length;
+  const parent = Array.from({ length: count + document.grids.length }, (_, i) => i);
+  const root = (i: number): number => {
+    let at = i;
+    while (parent[at] !== at) {
+      const up = parent[parent[at] as number] as number;
+      parent[at] = up;
       at = up;
     }
     return at;
   };
-  for (const link of document.links) if (carriesHeat(link)) parent.set(root(link.from), root(link.to));
-  const fixed = new Set(document.nodes.filter(({ fixedC }) => fixedC !== undefined).map(({ id }) => root(id)));
-  return document.nodes.map(({ id }) => id).filter((id) => !fixed.has(root(id)));
+  const join = (a: number, b: number) => {
+    parent[root(a)] = root(b);
+  };
+  const at = (id: string) => nodes.get(id) as number;
+  for (const link of document.links) if (carriesHeat(link)) join(at(link.from), at(link.to));
+  joinGrids(document.grids, at, (grid) => count + grid, join);
+  const reached = new Uint8Array(parent.length);
+  document.nodes.forEach(({ fixedC }, i) => {
+    if (fixedC !== undefined) reached[root(i)] = 1;
+  });
+  return parent.flatMap((_, i) => (reached[root(i)] === 1 ? [] : [i]));
 }
 
 /**
@@ -217,28 +242,26 @@ export function validateNetwork(document: NetworkDocument): void {
     }
     supplies.add(id);
   });
-  const links = new Set<string>();
+  checkLinkNames(document.links, findings);
   document.links.forEach((link, i) => {
-    const name = linkName(link, i);
-    if (links.has(name)) {
-      findings.add('duplicate-id', {
-        path: `/links/${String(i)}/id`,
-        message: `Two links have the id “${name}”`,
-        link: name,
-      });
-    }
-    links.add(name);
     checkLink(link, i, nodes, findings);
   });
+  const readings = checkGrids(document, nodes, findings);
   const fixed = new Set(document.nodes.filter(({ fixedC }) => fixedC !== undefined).map(({ id }) => id));
   document.nodes.forEach((node, i) => {
     if (node.source)
       checkSource(node.source, node.id, `/nodes/${String(i)}/source`, { nodes, supplies, fixed }, findings);
   });
-  checkLimits(document, { nodes, supplies }, findings);
+  checkLimits(document, { nodes, readings, supplies }, findings);
   if (findings.list.length === 0) {
-    for (const id of withoutPath(document)) {
-      const i = document.nodes.findIndex((node) => node.id === id);
+    for (const i of withoutPath(document, nodes)) {
+      const grid = document.grids[i - document.nodes.length];
+      if (grid) {
+        const message = `From the grid “${grid.id}” no heat can flow to a fixed temperature`;
+        findings.add('no-path-to-fixed', { path: `/grids/${String(i - document.nodes.length)}`, message });
+        continue;
+      }
+      const { id } = document.nodes[i] as NetworkNode;
       findings.add('no-path-to-fixed', {
         path: `/nodes/${String(i)}`,
         message: `From “${id}” no heat can flow to a fixed temperature`,

@@ -140,7 +140,8 @@ export function minimumDegree(graph: Graph, late: readonly number[] = []): Int32
           let alive = 0;
           const eStart = elementStart[e] as number;
           const eEnd = eStart + (elementSize[e] as number);
-          for (let r = eStart; r < eEnd; r++) if (state[buffer[r] as number] === 0) buffer[eStart + alive++] = buffer[r] as number;
+          for (let r = eStart; r < eEnd; r++)
+            if (state[buffer[r] as number] === 0) buffer[eStart + alive++] = buffer[r] as number;
           elementSize[e] = alive;
           outside[e] = alive;
         }

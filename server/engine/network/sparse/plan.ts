@@ -25,7 +25,8 @@ export interface EliminationPlan {
 function compressPairs(n: number, pairs: Int32Array): { graph: Graph; pairSlots: Int32Array } {
   const count = pairs.length / 2;
   const rowEnd = new Int32Array(n + 1);
-  for (let p = 0; p < pairs.length; p++) rowEnd[(pairs[p] as number) + 1] = (rowEnd[(pairs[p] as number) + 1] as number) + 1;
+  for (let p = 0; p < pairs.length; p++)
+    rowEnd[(pairs[p] as number) + 1] = (rowEnd[(pairs[p] as number) + 1] as number) + 1;
   for (let i = 0; i < n; i++) rowEnd[i + 1] = (rowEnd[i + 1] as number) + (rowEnd[i] as number);
   const fill = rowEnd.slice(0, n);
   const column = new Int32Array(pairs.length);
@@ -163,7 +164,7 @@ function makePlan(n: number, pairs: Int32Array, late: readonly number[]): Elimin
 const kept: { n: number; pairs: Int32Array; late: string; plan: EliminationPlan }[] = [];
 const mostKept = 12;
 /** Plans of larger structures than this are not kept [pairs]. */
-const largestKept = 20000;
+const largestKept = 60000;
 
 function sameNumbers(a: Int32Array, b: Int32Array): boolean {
   if (a.length !== b.length) return false;
@@ -191,4 +192,9 @@ export function eliminationPlan(n: number, pairs: Int32Array, late: readonly num
     if (kept.length > mostKept) kept.shift();
   }
   return plan;
+}
+
+/** Forgets the plans kept: the next network pays for its own. */
+export function forgetPlans(): void {
+  kept.length = 0;
 }
