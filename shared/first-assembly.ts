@@ -149,14 +149,15 @@ function housingOf(answers: FirstAnswers): Housing {
     finishOutside: null,
     finishInside: null,
     print: printOf(answers),
-    exposure: { kind: face === closed ? 'against-wall' : 'open' },
+    exposure: face === closed ? { kind: 'against-wall', surfaceC: null, jointKM2PerW: 0.005 } : { kind: 'open' },
     loadState: null,
     vents: [],
   });
   return {
     outerM: answers.sizeM ?? smallBoxM,
-    pose: { up: 'top', tiltDeg: 0 },
+    pose: { up: 'top', tiltDeg: 0, towards: null },
     fill: { kind: 'air' },
+    fan: null,
     touched: answers.touched,
     faces: Object.fromEntries(faceNames.map((face) => [face, wall(face)])) as Housing['faces'],
   };
@@ -200,6 +201,7 @@ function carriersOf(seat: Seat, housing: Housing, { materials }: Catalogue): Car
       kind: 'board',
       sizeM,
       layers: [...foil(0.5), { material: { version: laminate }, thicknessM: 0.0016, coverage: 1 }, ...foil(0.5)],
+      zones: [],
       finish: null,
       standOffM: null,
       on: { face: 'bottom' },
@@ -231,12 +233,15 @@ function scenarioOf(answers: FirstAnswers): Scenario {
     surroundingsC: null,
     altitudeM: answers.altitudeM ?? 0,
     airSpeedMPerS: 0,
+    skyC: null,
+    pose: null,
     sun:
       sun === 'none'
         ? null
         : {
             irradianceWPerM2: fullSun,
             onto: 'worst',
+            direction: null,
             glazingTransmittance: sun === 'window' ? paneTransmittance : 1,
           },
     mustHold: true,

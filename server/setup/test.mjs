@@ -9,6 +9,7 @@ import { ensurePackages } from './packages.mjs';
 import { packaged } from './paths.mjs';
 import { PrivateCluster } from './postgres.mjs';
 import { noteProcess } from './processes.mjs';
+import { ensurePython } from './python.mjs';
 import { endRunning, run } from './run.mjs';
 import { clearTestFolder, sweepAbandoned, testFolderPrefix } from './throw-away.mjs';
 
@@ -105,6 +106,8 @@ async function runAll(chosen, cluster, folder) {
   const served = chosen.projects.filter((name) => name === 'api' || name === 'browser');
   const alone = chosen.projects.filter((name) => !served.includes(name));
   const env = { TRIMWICK_TEST_FOLDER: folder };
+  // Where it cannot be had, the line to run is said once here, and the tests that need it fail.
+  if (alone.includes('reference')) env.PYTHON_PATH = await attempt(ensurePython);
   if (alone.length > 0) await attempt(() => runProjects(alone, chosen.files, env, folder));
   if (served.length === 0) return;
   const more = await attempt(() => prepareServed(served, cluster));

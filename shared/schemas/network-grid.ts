@@ -15,6 +15,8 @@ export const gridLayerSchema = z.strictObject({
   thicknessM: positive(1, 'm', 'The layer thickness'),
   inPlaneWPerMK: positive(1e5, 'W/(m K)', 'The conductivity'),
   throughWPerMK: positive(1e5, 'W/(m K)', 'The conductivity'),
+  /** For warm-up. */
+  heatCapacityJPerM3K: bounded(0, 1e8, 'J/(m³ K)', 'The heat capacity').optional(),
 });
 
 const surface = { id: idSchema, side, to: idSchema };
@@ -40,6 +42,26 @@ export const gridSurfaceSchema = z.discriminatedUnion('kind', [
     kind: z.literal('radiation'),
     emissivity: bounded(0, 1, '', 'The emissivity'),
     areaFactor: bounded(0, 100, '', 'The factor').default(1),
+  }),
+  /** A closed gap of air before a surface of one temperature, as in an air-gap link. */
+  z.strictObject({
+    ...surface,
+    kind: z.literal('air-gap'),
+    gapM: positive(10, 'm', 'The gap'),
+    heightM: positive(100, 'm', 'The height'),
+    tiltDeg: bounded(0, 180, '°', 'The tilt'),
+  }),
+  /** Parallel fins all over the side, as in a fin-array link. */
+  z.strictObject({
+    ...surface,
+    kind: z.literal('fin-array'),
+    baseWidthM: positive(10, 'm', 'The width'),
+    baseHeightM: positive(10, 'm', 'The height'),
+    finHeightM: positive(10, 'm', 'The fin height'),
+    finThicknessM: positive(1, 'm', 'The fin thickness'),
+    finCount: z.number().int().min(2).max(10000),
+    conductivityWPerMK: positive(1e5, 'W/(m K)', 'The conductivity'),
+    tiltDeg: bounded(0, 90, '°', 'The tilt').default(0),
   }),
   z.strictObject({ ...surface, kind: z.literal('film'), coefficientWPerM2K: bounded(0, 1e7, 'W/(m² K)', 'The film') }),
 ]);
@@ -115,6 +137,9 @@ export const gridSchema = z.strictObject({
     .max(2000)
     .default([]),
 });
+/** As it is written. */
+export type NetworkGridInput = z.input<typeof gridSchema>;
+/** With defaults filled. */
 export type NetworkGrid = z.output<typeof gridSchema>;
 export type GridLayer = NetworkGrid['layers'][number];
 export type GridEdge = z.output<typeof edge>;

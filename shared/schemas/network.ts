@@ -69,7 +69,38 @@ export const nodeSchema = z.strictObject({
 
 const link = { id: idSchema.optional(), from: idSchema, to: idSchema };
 
-export const convectionShapes = ['vertical-plate', 'plate-facing-up', 'plate-facing-down'] as const;
+export const convectionShapes = [
+  'vertical-plate',
+  'plate-facing-up',
+  'plate-facing-down',
+  'inclined-plate',
+  'horizontal-cylinder',
+  'vertical-cylinder',
+  'sphere',
+] as const;
+
+/** How moving air meets the air that rises by itself. */
+export const convectionFlows = ['assisting', 'transverse', 'opposing'] as const;
+
+const tilt = bounded(0, 180, '°', 'The tilt');
+const openingArea = bounded(0, 1e4, 'm²', 'The area of the opening');
+
+/** Air exchange between inside and outside air: a given flow, openings at two heights, or a fan before openings. */
+const ventilationFields = {
+  /** At the temperature of the air that it removes, that of `from`. */
+  flowM3PerS: bounded(0, 1e4, 'm³/s', 'The flow').optional(),
+  inletAreaM2: openingArea.optional(),
+  outletAreaM2: openingArea.optional(),
+  /** Between the mid-heights of the openings. */
+  heightM: bounded(0, 1e3, 'm', 'The height').optional(),
+  dischargeCoefficient: bounded(0, 1, '', 'The discharge coefficient').default(0.6),
+  /** Pressure of a fan against its flow, [[m³/s, Pa], …], rising in flow. */
+  fanCurve: z
+    .array(z.tuple([bounded(0, 1e4, 'm³/s', 'The flow'), bounded(0, 1e6, 'Pa', 'The pressure')]))
+    .min(2, 'A fan curve needs at least two points')
+    .max(200)
+    .optional(),
+};
 
 export const linkSchema = z.discriminatedUnion('kind', [
   z.strictObject({ ...link, kind: z.literal('resistance'), resistanceKPerW: positive(1e12, 'K/W', 'The resistance') }),
@@ -91,7 +122,17 @@ export const linkSchema = z.discriminatedUnion('kind', [
     kind: z.literal('convection'),
     shape: z.enum(convectionShapes),
     areaM2: area,
+    /** The characteristic length of the shape. */
     lengthM: length,
+    /** Of an inclined plate: 0 looks up, 90 is upright, 180 looks down. */
+    tiltDeg: tilt.optional(),
+    /** Of a vertical cylinder. */
+    diameterM: positive(1e4, 'm', 'The diameter').optional(),
+    /** 0 for still air. */
+    airSpeedMPerS: bounded(0, 1000, 'm/s', 'The air speed').optional(),
+    /** Along the flow, of plates; without it `lengthM`. */
+    flowLengthM: positive(1e4, 'm', 'The flow length').optional(),
+    flow: z.enum(convectionFlows).optional(),
     correlation: z.string().max(60).optional(),
     scale: bounded(0, 1000, '', 'The scale').default(1),
   }),
@@ -103,6 +144,38 @@ export const linkSchema = z.discriminatedUnion('kind', [
     emissivityTo: share.optional(),
     areaToM2: area.optional(),
     viewFactor: bounded(0, 1, '', 'The view factor').optional(),
+  }),
+  z.strictObject({ ...link, kind: z.literal('ventilation'), ...ventilationFields }),
+  z.strictObject({
+    ...link,
+    kind: z.literal('air-gap'),
+    areaM2: area,
+    gapM: length,
+    heightM: length,
+    /** 0 level with `from` below, 90 upright, 180 level with `from` above. */
+    tiltDeg: tilt,
+  }),
+  z.strictObject({
+    ...link,
+    kind: z.literal('fin-array'),
+    baseWidthM: length,
+    /** Along the channels. */
+    baseHeightM: length,
+    finHeightM: length,
+    finThicknessM: length,
+    finCount: z.number().int('The number of fins must be a whole number').min(2, 'At least two fins').max(10000),
+    conductivityWPerMK: positive(1e5, 'W/(m K)', 'The conductivity'),
+    /** Of the channels: 0 upright. */
+    tiltDeg: bounded(0, 90, '°', 'The tilt').default(0),
+  }),
+  z.strictObject({
+    ...link,
+    kind: z.literal('channel'),
+    /** Both faces. */
+    areaM2: area,
+    spacingM: length,
+    heightM: length,
+    correlation: z.string().max(60).optional(),
   }),
 ]);
 

@@ -3,7 +3,7 @@ import type { Estimate } from '../../../shared/schemas/estimate.js';
 import type { DeviceAnswer, Warning } from '../../../shared/schemas/network-answers.js';
 import type { RuleSet } from '../../../shared/schemas/rule-set.js';
 import { compileAssembly } from '../assembly/compile.js';
-import { faceModels } from '../assembly/compile-housing.js';
+import { boxModel } from '../assembly/compile-housing.js';
 import { resolveAssembly } from '../assembly/resolve.js';
 import type { ResolvedAssembly } from '../assembly/resolved.js';
 import { EngineError } from '../errors.js';
@@ -103,7 +103,6 @@ export function estimateAssembly(
   const estimates = assembly.scenarios.map((scenario) => estimateScenario(assembly, scenario, rules));
   const chosen = choose(estimates, options.scenario);
   const { answer, compiled, scenario } = chosen;
-  const models = faceModels(assembly, 'mid');
   return {
     scenario: scenario.id,
     verdict: chosen.verdict,
@@ -130,7 +129,7 @@ export function estimateAssembly(
       compiled.nodes,
     ),
     heatBalance: answer.heatBalance,
-    handCheck: handCheck(models, answer, scenario.airC),
+    handCheck: handCheck(assembly, boxModel(assembly, 'mid'), answer, scenario.airC),
     warnings: distinct([...compiled.warnings, ...answer.warnings]),
     assumed: assumptionEffects(document, assembly, rules, chosen),
     engineVersion,

@@ -2,8 +2,7 @@ import type { EstimateLimit, Verdict } from '../../../shared/schemas/estimate.js
 import type { CeilingAnswer, SolveAnswer } from '../../../shared/schemas/network-answers.js';
 import type { RuleSet } from '../../../shared/schemas/rule-set.js';
 import { compileAssembly, type CompiledAssembly } from '../assembly/compile.js';
-import type { ResolvedScenario } from '../assembly/compile-housing.js';
-import type { ResolvedAssembly } from '../assembly/resolved.js';
+import type { ResolvedAssembly, ResolvedScenario } from '../assembly/resolved.js';
 import { solveNetwork } from '../network/solve.js';
 import { engineVersion } from '../version.js';
 import { findCeiling } from './ceiling.js';
@@ -22,7 +21,7 @@ export interface ScenarioEstimate {
 }
 
 function hasBand(assembly: ResolvedAssembly): boolean {
-  return Object.values(assembly.faces).some((face) => face.printed !== null);
+  return Object.values(assembly.box?.faces ?? {}).some((face) => face.printed !== null);
 }
 
 /** Present drive in its own unit: amperes of the supply, or watts of the driven parts. */
@@ -59,7 +58,7 @@ export function estimateScenario(
   const ceiling = findCeiling(compiled.network, compiled.drive);
   const bands = bandsOf(hasBand(assembly));
   const networks = bands.map((band) =>
-    band === 'mid' ? compiled.network : compileAssembly(assembly, scenario, rules, band).network,
+    band === 'mid' ? compiled.network : compileAssembly(assembly, scenario, rules, { band }).network,
   );
   const guarded = guardedCeiling(networks, compiled.limits, compiled.drive);
   const drive = presentDrive(assembly);

@@ -27,8 +27,14 @@ export interface LimitInfo {
 /** Least resistance of a joint [K/W]: what is taken as “no resistance”. */
 const leastResistance = 1e-4;
 
+/** Film that cells are sized by: natural convection and radiation together, common practice [W/(m² K)]. */
+const cellFilm = 12;
+
 /** Collects nodes, links and limits with what a reader needs to know of them. */
 export class NetworkBuilder {
+  /** @param refine divides the cells of all grids */
+  constructor(private readonly refine = 1) {}
+
   readonly nodes: NetworkNode[] = [];
   readonly links: NetworkLink[] = [];
   readonly grids: NetworkGrid[] = [];
@@ -36,6 +42,7 @@ export class NetworkBuilder {
   readonly nodeInfo: NodeInfo[] = [];
   readonly limitInfo: LimitInfo[] = [];
   readonly warnings: Warning[] = [];
+  private readonly readings = new Set<string>();
   private readonly byId = new Map<string, NetworkNode>();
 
   node(id: string, role: NodeRole, label: string, values: Omit<NetworkNode, 'id'> = {}): void {
@@ -46,7 +53,37 @@ export class NetworkBuilder {
   }
 
   has(id: string): boolean {
-    return this.byId.has(id);
+    return this.byId.has(id) || this.readings.has(id);
+  }
+
+  /** Adds a plate, board or wall that is divided into cells. */
+  grid(grid: Pick<NetworkGrid, 'id' | 'sizeM' | 'layers'> & Partial<NetworkGrid>): void {
+    this.grids.push({
+      zones: [],
+      filmForCellsWPerM2K: cellFilm,
+      refine: this.refine,
+      patches: [],
+      free: {},
+      surfaces: [],
+      joins: [],
+      edges: [],
+      edgeJoins: [],
+      readings: [],
+      ...grid,
+    });
+  }
+
+  gridOf(id: string): NetworkGrid {
+    const grid = this.grids.find((candidate) => candidate.id === id);
+    if (!grid) throw new RangeError(`No grid ${id}`);
+    return grid;
+  }
+
+  /** A mean or highest temperature of a grid’s cells, under a name of its own. */
+  reading(grid: string, reading: NetworkGrid['readings'][number], role: NodeRole, label: string): void {
+    this.gridOf(grid).readings.push(reading);
+    this.nodeInfo.push({ id: reading.id, role, label });
+    this.readings.add(reading.id);
   }
 
   addHeat(id: string, heatW: number): void {

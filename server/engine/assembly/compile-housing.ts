@@ -1,13 +1,14 @@
 import { faceNames, type FaceName } from '../../../shared/schemas/assembly.js';
 import { printedWallConductivity, type WallBand } from '../conduction/printed-wall.js';
-import type { NetworkBuilder } from './builder.js';
-import { edges, faceSize, innerSize, outsideFacing, turned, verticalExtent } from './geometry.js';
 import { lookUp } from '../tables.js';
+import type { NetworkBuilder } from './builder.js';
+import { edgeTowards, edges, faceSize, innerSize } from './geometry.js';
+import { meetRoom } from './outside.js';
+import { normalOf, slopeExtents, tiltOf } from './pose.js';
 import { wallReferenceC } from './resolve-housing.js';
-import type { ResolvedAssembly, ResolvedFace } from './resolved.js';
-import { convectionLink, type Surface } from './surfaces.js';
-
-export type ResolvedScenario = ResolvedAssembly['scenarios'][number];
+import { insideOf } from './resolve-parts.js';
+import type { Faces, ResolvedAssembly, ResolvedFace, ResolvedScenario } from './resolved.js';
+import type { Surface } from './surfaces.js';
 
 export interface FaceModel {
   face: ResolvedFace;
@@ -17,11 +18,28 @@ export interface FaceModel {
   innerSizeM: [number, number];
   innerAreaM2: number;
   outerAreaM2: number;
+  /** True where something that makes or brings heat is joined to it: then it is divided into cells. */
+  gridded: boolean;
+}
+
+export type FaceModels = Record<FaceName, FaceModel>;
+
+/** A box with its walls as made. */
+export interface BoxModel {
+  assembly: ResolvedAssembly;
+  outerM: [number, number, number];
+  innerM: [number, number, number];
+  faces: Faces;
+  models: FaceModels;
 }
 
 /** “top”, as a reader names it. */
 export function faceLabel(face: FaceName): string {
   return `${face.charAt(0).toUpperCase()}${face.slice(1)} face`;
+}
+
+export function gridOfFace(face: FaceName): string {
+  return `face.${face}`;
 }
 
 export function wallConductivity(face: ResolvedFace, band: WallBand): { through: number; inPlane: number } {
@@ -30,25 +48,53 @@ export function wallConductivity(face: ResolvedFace, band: WallBand): { through:
   return { through: along, inPlane: along };
 }
 
-export function faceModels(assembly: ResolvedAssembly, band: WallBand): Record<FaceName, FaceModel> {
-  const { faces, document } = assembly;
-  const { outerM } = document.housing;
+/** `null` for an open assembly. */
+export function boxModel(assembly: ResolvedAssembly, band: WallBand): BoxModel | null {
+  const { box } = assembly;
+  if (!box) return null;
+  const { faces, housing } = box;
   const wallM = Object.fromEntries(faceNames.map((name) => [name, faces[name].wallM])) as Record<FaceName, number>;
-  const inner = innerSize(outerM, wallM);
-  return Object.fromEntries(
+  const innerM = innerSize(housing.outerM, wallM);
+  const models = Object.fromEntries(
     faceNames.map((name) => {
-      const innerSizeM = faceSize(name, inner);
-      const [u, v] = faceSize(name, outerM);
+      const innerSizeM = faceSize(name, innerM);
+      const [u, v] = faceSize(name, housing.outerM);
       const model: FaceModel = {
         face: faces[name],
         ...wallConductivity(faces[name], band),
         innerSizeM,
         innerAreaM2: innerSizeM[0] * innerSizeM[1],
         outerAreaM2: u * v,
+        gridded:
+          assembly.parts.some(({ on }) => on.kind === 'face' && on.face === name) ||
+          assembly.carriers.some(({ face, kind }) => face === name && kind !== 'board'),
       };
       return [name, model];
     }),
-  ) as Record<FaceName, FaceModel>;
+  ) as FaceModels;
+  return { assembly, outerM: housing.outerM, innerM, faces, models };
+}
+
+/** The inside and the outside of a face as surfaces. */
+export function faceSurface(
+  box: BoxModel,
+  name: FaceName,
+  side: 'inside' | 'outside',
+  scenario: ResolvedScenario,
+): Surface {
+  const model = box.models[name];
+  const inside = side === 'inside';
+  const tilt = tiltOf(normalOf(name), scenario.up);
+  return {
+    id: `face.${name}.${side}`,
+    of: model.gridded
+      ? { grid: gridOfFace(name), side: inside ? 'near' : 'far' }
+      : { node: `face.${name}.${inside ? 'inner' : 'outer'}` },
+    areaM2: inside ? model.innerAreaM2 : model.outerAreaM2,
+    tiltDeg: inside ? 180 - tilt : tilt,
+    slopeM: slopeExtents(name, scenario.up, inside ? model.innerSizeM : faceSize(name, box.outerM)),
+    emissivity: inside ? model.face.emissivityInside : model.face.emissivityOutside,
+  };
 }
 
 /**
@@ -57,113 +103,93 @@ export function faceModels(assembly: ResolvedAssembly, band: WallBand): Record<F
  */
 const edgeShare = 1 / 3;
 
-/** Nodes of the six faces, their walls, their outsides and the conduction round the edges. */
-export function compileHousing(
-  builder: NetworkBuilder,
-  assembly: ResolvedAssembly,
-  scenario: ResolvedScenario,
-  models: Record<FaceName, FaceModel>,
-): void {
-  const { outerM, pose } = assembly.document.housing;
-  builder.node('ambient', 'ambient', 'Room air', { fixedC: scenario.airC });
-  builder.node('surroundings', 'surroundings', 'Surroundings', { fixedC: scenario.surroundingsC });
-  for (const name of faceNames) {
-    const model = models[name];
-    const { face } = model;
+function compileWall(builder: NetworkBuilder, box: BoxModel, name: FaceName): void {
+  const model = box.models[name];
+  const { face } = model;
+  const perVolume = face.material.densityKgPerM3.value * face.material.specificHeatJPerKgK.value;
+  const inner = `face.${name}.inner`;
+  const outer = `face.${name}.outer`;
+  if (!model.gridded) {
     const conductionArea = Math.sqrt(model.innerAreaM2 * model.outerAreaM2);
-    const half =
-      (conductionArea * face.wallM * face.material.densityKgPerM3.value * face.material.specificHeatJPerKgK.value) / 2;
-    builder.node(`face.${name}.inner`, 'face', `${faceLabel(name)}, inside`, { capacityJPerK: half });
-    builder.node(`face.${name}.outer`, 'face', `${faceLabel(name)}, outside`, { capacityJPerK: half });
+    const half = (conductionArea * face.wallM * perVolume) / 2;
+    builder.node(inner, 'face', `${faceLabel(name)}, inside`, { capacityJPerK: half });
+    builder.node(outer, 'face', `${faceLabel(name)}, outside`, { capacityJPerK: half });
     builder.link({
       id: `face.${name}.wall`,
       kind: 'conduction',
-      from: `face.${name}.inner`,
-      to: `face.${name}.outer`,
+      from: inner,
+      to: outer,
       conductivityWPerMK: model.through,
       areaM2: conductionArea,
       lengthM: face.wallM,
     });
-    if (!face.open) continue;
-    const size = faceSize(name, outerM);
-    const outside: Surface = {
-      id: `face.${name}.outside`,
-      node: `face.${name}.outer`,
-      areaM2: model.outerAreaM2,
-      facing: outsideFacing(name, pose.up),
-      sizeM: size,
-      verticalM: verticalExtent(name, pose.up, size),
-      emissivity: face.emissivityOutside,
-    };
-    builder.link(convectionLink(outside, 'ambient'));
-    builder.link({
-      id: `face.${name}.outside.radiation`,
-      kind: 'radiation',
-      from: outside.node,
-      to: 'surroundings',
-      areaM2: outside.areaM2,
-      emissivity: outside.emissivity,
-    });
+    return;
   }
-  compileEdges(builder, assembly, models);
-  compileSun(builder, scenario, models);
+  builder.node(inner, 'face', `${faceLabel(name)}, inside, mean of what is bare`);
+  builder.node(outer, 'face', `${faceLabel(name)}, outside, mean`);
+  const { housing } = box.assembly.box as NonNullable<ResolvedAssembly['box']>;
+  const inside = insideOf(name, housing, box.faces);
+  builder.grid({
+    id: gridOfFace(name),
+    sizeM: faceSize(name, box.outerM),
+    layers: [
+      {
+        thicknessM: face.wallM,
+        inPlaneWPerMK: model.inPlane,
+        throughWPerMK: model.through,
+        heatCapacityJPerM3K: perVolume,
+      },
+    ],
+    nearWithinM: [inside.xM, inside.yM, inside.xM + inside.sizeM[0], inside.yM + inside.sizeM[1]],
+    free: { near: inner, far: outer },
+  });
+  builder.reading(
+    gridOfFace(name),
+    { id: `face.${name}.hotSpot`, side: 'far', what: 'peak' },
+    'spot',
+    `${faceLabel(name)}, outside, hottest spot`,
+  );
 }
 
-/** Conduction round the twelve edges, half of it between the insides and half between the outsides. */
-function compileEdges(builder: NetworkBuilder, assembly: ResolvedAssembly, models: Record<FaceName, FaceModel>): void {
-  for (const edge of edges(assembly.document.housing.outerM)) {
-    const a = models[edge.a];
-    const b = models[edge.b];
-    const resistance =
-      (edge.acrossA * edgeShare) / (a.inPlane * a.face.wallM * edge.lengthM) +
-      (edge.acrossB * edgeShare) / (b.inPlane * b.face.wallM * edge.lengthM);
+/** Nodes of the six faces, their walls, their outsides and the conduction round the edges. */
+export function compileHousing(builder: NetworkBuilder, box: BoxModel, scenario: ResolvedScenario): void {
+  for (const name of faceNames) compileWall(builder, box, name);
+  compileEdges(builder, box);
+  for (const name of faceNames) meetRoom(builder, box, name, scenario);
+}
+
+/** Conduction round the twelve edges: half of it between the insides and half between the outsides, or from cell to cell. */
+function compileEdges(builder: NetworkBuilder, box: BoxModel): void {
+  for (const edge of edges(box.outerM)) {
+    const a = box.models[edge.a];
+    const b = box.models[edge.b];
+    const beyondA = (edge.acrossA * edgeShare) / (a.inPlane * a.face.wallM);
+    const beyondB = (edge.acrossB * edgeShare) / (b.inPlane * b.face.wallM);
+    if (a.gridded && b.gridded) {
+      builder.gridOf(gridOfFace(edge.a)).edgeJoins.push({
+        edge: edgeTowards(edge.a, edge.b),
+        grid: gridOfFace(edge.b),
+        gridEdge: edgeTowards(edge.b, edge.a),
+      });
+      continue;
+    }
+    if (a.gridded || b.gridded) {
+      const [own, other, beyond] = a.gridded ? [edge.a, edge.b, beyondB] : [edge.b, edge.a, beyondA];
+      builder.gridOf(gridOfFace(own)).edges.push({
+        edge: edgeTowards(own, other),
+        near: `face.${other}.inner`,
+        far: `face.${other}.outer`,
+        resistanceKMPerW: beyond,
+      });
+      continue;
+    }
     for (const side of ['inner', 'outer'] as const) {
       builder.resistance(
         `edge.${edge.a}-${edge.b}.${side}`,
         `face.${edge.a}.${side}`,
         `face.${edge.b}.${side}`,
-        2 * resistance,
+        (2 * (beyondA + beyondB)) / edge.lengthM,
       );
     }
   }
-}
-
-/** Sun on one face, met squarely: α G τ A into its outside. */
-function compileSun(builder: NetworkBuilder, scenario: ResolvedScenario, models: Record<FaceName, FaceModel>): void {
-  const { sun } = scenario;
-  if (sun === null) return;
-  const absorbed = (name: FaceName) =>
-    models[name].face.open
-      ? models[name].face.solarAbsorptance * models[name].outerAreaM2 * sun.irradianceWPerM2 * sun.glazingTransmittance
-      : 0;
-  const onto =
-    sun.onto === 'worst'
-      ? faceNames.reduce((best, name) => (absorbed(name) > absorbed(best) ? name : best), 'top')
-      : sun.onto;
-  if (absorbed(onto) > 0) builder.addHeat(`face.${onto}.outer`, absorbed(onto));
-}
-
-/** The free inside of each face: what plates, parts and close boards leave of it. */
-export function interiorFaces(
-  assembly: ResolvedAssembly,
-  models: Record<FaceName, FaceModel>,
-  coveredM2: Record<FaceName, number>,
-): Surface[] {
-  const { up } = assembly.document.housing.pose;
-  return faceNames.flatMap((name) => {
-    const model = models[name];
-    const areaM2 = model.innerAreaM2 - coveredM2[name];
-    if (areaM2 <= 1e-9) return [];
-    return [
-      {
-        id: `face.${name}.inside`,
-        node: `face.${name}.inner`,
-        areaM2,
-        facing: turned(outsideFacing(name, up)),
-        sizeM: model.innerSizeM,
-        verticalM: verticalExtent(name, up, model.innerSizeM),
-        emissivity: model.face.emissivityInside,
-      },
-    ];
-  });
 }

@@ -1,8 +1,8 @@
-import { faceNames, type FaceName } from '../../../shared/schemas/assembly.js';
+import { faceNames } from '../../../shared/schemas/assembly.js';
 import type { RuleSet, touchSurfaces } from '../../../shared/schemas/rule-set.js';
 import { EngineError } from '../errors.js';
 import type { NetworkBuilder } from './builder.js';
-import { faceLabel, type FaceModel } from './compile-housing.js';
+import { faceLabel, type BoxModel } from './compile-housing.js';
 import { compilePartLimits } from './compile-part-limits.js';
 import { isPolymer } from './resolve-housing.js';
 import type { ResolvedAssembly, ResolvedFace } from './resolved.js';
@@ -20,8 +20,12 @@ function touchSurface(face: ResolvedFace): TouchSurface {
   return group === 'wood' ? 'wood' : 'plastic';
 }
 
-function nodesOf(builder: NetworkBuilder, prefix: string, fixed: readonly string[]): string[] {
-  return [...fixed, ...builder.nodeInfo.filter(({ id }) => id.startsWith(prefix)).map(({ id }) => id)];
+/** Those of the named places that are there, and every place whose name begins so. */
+function nodesOf(builder: NetworkBuilder, prefix: string, named: readonly string[]): string[] {
+  return [
+    ...named.filter((id) => builder.has(id)),
+    ...builder.nodeInfo.filter(({ id }) => id.startsWith(prefix)).map(({ id }) => id),
+  ];
 }
 
 function softeningLimits(builder: NetworkBuilder, face: ResolvedFace, rules: RuleSet): void {
@@ -38,7 +42,11 @@ function softeningLimits(builder: NetworkBuilder, face: ResolvedFace, rules: Rul
   }
   const margin = rules.polymerMarginK[face.loadState];
   const limitC = softening.temperatureC - margin.value;
-  const nodes = nodesOf(builder, `face.${face.name}.peak.`, [`face.${face.name}.inner`, `face.${face.name}.outer`]);
+  const nodes = nodesOf(builder, `face.${face.name}.peak.`, [
+    `face.${face.name}.inner`,
+    `face.${face.name}.outer`,
+    `face.${face.name}.hotSpot`,
+  ]);
   for (const node of nodes) {
     builder.limit(
       { id: `${group}@${node}`, node, maxC: limitC },
@@ -66,9 +74,14 @@ function softeningLimits(builder: NetworkBuilder, face: ResolvedFace, rules: Rul
   }
 }
 
+/** The hottest place of a face’s outside: its hottest cell, or the face where it is not divided. */
+function hottestOutside(builder: NetworkBuilder, face: string): string[] {
+  return [builder.has(`face.${face}.hotSpot`) ? `face.${face}.hotSpot` : `face.${face}.outer`];
+}
+
 function touchLimits(builder: NetworkBuilder, assembly: ResolvedAssembly, face: ResolvedFace, rules: RuleSet): void {
   const { touched } = assembly;
-  if (touched === 'no' || !face.open) return;
+  if (touched === 'no' || !['open', 'near'].includes(face.exposure.kind)) return;
   const surface = touchSurface(face);
   const entry = rules.touchLimits.find((row) => row.surface === surface && row.contactTime === touched);
   if (!entry) {
@@ -80,7 +93,7 @@ function touchLimits(builder: NetworkBuilder, assembly: ResolvedAssembly, face: 
     return;
   }
   const group = `face.${face.name}.touch`;
-  for (const node of nodesOf(builder, `face.${face.name}.hotSpot.`, [`face.${face.name}.outer`])) {
+  for (const node of hottestOutside(builder, face.name)) {
     builder.limit(
       { id: `${group}@${node}`, node, maxC: entry.maxC.value },
       {
@@ -100,11 +113,11 @@ function touchLimits(builder: NetworkBuilder, assembly: ResolvedAssembly, face: 
   }
 }
 
-/** The document’s own limits. `face.<name>.hotSpot` stands for every hot spot of that face’s outside. */
+/** The document’s own limits. `face.<name>.hotSpot` stands for the face’s outside where that is not divided into cells. */
 function ownLimits(builder: NetworkBuilder, assembly: ResolvedAssembly): void {
   assembly.document.limits.forEach((limit, i) => {
     const hot = /^face\.(\w+)\.hotSpot$/.exec(limit.node);
-    const nodes = hot ? nodesOf(builder, `${limit.node}.`, [`face.${hot[1] ?? ''}.outer`]) : [limit.node];
+    const nodes = hot ? hottestOutside(builder, hot[1] ?? '') : [limit.node];
     const missing = nodes.find((node) => !builder.has(node));
     if (missing !== undefined) {
       throw new EngineError('unknown-reference', `There is no node “${missing}”`, [
@@ -128,17 +141,52 @@ function ownLimits(builder: NetworkBuilder, assembly: ResolvedAssembly): void {
   });
 }
 
+/** The air that parts stand in. */
+function airOf(builder: NetworkBuilder): string {
+  return ['air.inside', 'fill.inside'].find((id) => builder.has(id)) ?? 'ambient';
+}
+
+/** The fill’s own limit, where it is hottest: in its middle and at the parts in it. */
+function fillLimits(builder: NetworkBuilder, assembly: ResolvedAssembly): void {
+  const fill = assembly.box?.housing.fill;
+  if (!fill || fill.kind === 'air' || fill.maxC === null) return;
+  const group = 'fill.max';
+  const touching = builder.links.flatMap((link) =>
+    'to' in link && link.to === 'fill.inside' && link.from.endsWith('.case') ? [link.from] : [],
+  );
+  for (const node of new Set(['fill.inside', ...touching])) {
+    builder.limit(
+      { id: `${group}@${node}`, node, maxC: fill.maxC },
+      {
+        group,
+        label: fill.kind === 'foam' ? 'Foam' : 'Potting',
+        kind: 'temperature',
+        unit: '°C',
+        askedMargin: 0,
+        basis: {
+          reason: `Highest temperature of the ${fill.kind}`,
+          source: 'entered in the assembly',
+          standing: 'data-sheet',
+        },
+      },
+    );
+  }
+}
+
 /** Every limit of the assembly, with what the rule set asks beyond it. */
 export function compileLimits(
   builder: NetworkBuilder,
   assembly: ResolvedAssembly,
-  models: Record<FaceName, FaceModel>,
+  box: BoxModel | null,
   rules: RuleSet,
 ): void {
-  for (const part of assembly.parts) compilePartLimits(builder, part, rules);
-  for (const name of faceNames) {
-    softeningLimits(builder, models[name].face, rules);
-    touchLimits(builder, assembly, models[name].face, rules);
+  for (const part of assembly.parts) compilePartLimits(builder, part, rules, airOf(builder));
+  if (box) {
+    for (const name of faceNames) {
+      softeningLimits(builder, box.models[name].face, rules);
+      touchLimits(builder, assembly, box.models[name].face, rules);
+    }
+    fillLimits(builder, assembly);
   }
   for (const supply of assembly.document.supplies) {
     if (supply.maxA === null) continue;

@@ -1,18 +1,16 @@
 import type { PartType } from '../../../shared/schemas/part-type.js';
 import type { RuleSet } from '../../../shared/schemas/rule-set.js';
 import type { LimitInfo, NetworkBuilder } from './builder.js';
+import { groundOf } from './compile-parts.js';
 import type { ResolvedPart } from './resolved.js';
 
 type Rule = RuleSet['perClass'][number] | undefined;
 type Rating = PartType['ratings'][number];
 
 /** Node whose temperature a derating curve refers to. “Ambient” of a part in a box is the air that it stands in. */
-function referenceNode(part: ResolvedPart, reference: string): string {
-  if (reference === 'ambient') return 'air.inside';
-  if (reference !== 'board') return `part.${part.id}.case`;
-  return part.on.kind === 'face'
-    ? `face.${part.on.face}.peak.${part.id}`
-    : `carrier.${part.on.carrier}.peak.${part.id}`;
+function referenceNode(part: ResolvedPart, reference: string, air: string): string {
+  if (reference === 'ambient') return air;
+  return reference === 'board' ? groundOf(part).peak : `part.${part.id}.case`;
 }
 
 function info(part: ResolvedPart, suffix: string, what: string, rule: string, rating: Rating['max']) {
@@ -34,7 +32,14 @@ function bankPower(part: ResolvedPart, rating: Rating): number | null {
   return null;
 }
 
-function ratingLimit(builder: NetworkBuilder, part: ResolvedPart, rating: Rating, rules: RuleSet, rule: Rule): void {
+function ratingLimit(
+  builder: NetworkBuilder,
+  part: ResolvedPart,
+  rating: Rating,
+  rules: RuleSet,
+  rule: Rule,
+  air: string,
+): void {
   const stress = rule?.largestStressRatio.value ?? 1;
   const ruleText = rule ? `${rules.name}: ${rule.largestStressRatio.source}` : rules.name;
   const { electrical, deratingCurve: curve } = part.type;
@@ -49,7 +54,7 @@ function ratingLimit(builder: NetworkBuilder, part: ResolvedPart, rating: Rating
   if (watts !== null) {
     const derating =
       rating.quantity === 'powerW' && curve?.quantity === 'powerW'
-        ? { referenceNode: referenceNode(part, curve.reference), points: curve.points.value }
+        ? { referenceNode: referenceNode(part, curve.reference, air), points: curve.points.value }
         : undefined;
     builder.limit(
       { id, node: `part.${part.id}.junction`, maxW: watts, maxShare: 1, derating },
@@ -103,7 +108,7 @@ function ratingLimit(builder: NetworkBuilder, part: ResolvedPart, rating: Rating
 }
 
 /** Temperature limits, ratings and derating curve of one part. */
-export function compilePartLimits(builder: NetworkBuilder, part: ResolvedPart, rules: RuleSet): void {
+export function compilePartLimits(builder: NetworkBuilder, part: ResolvedPart, rules: RuleSet, air: string): void {
   const rule = rules.perClass.find((row) => row.class === part.type.class);
   for (const limit of part.type.temperatureLimits) {
     const node = `part.${part.id}.${limit.spot}`;
@@ -125,7 +130,7 @@ export function compilePartLimits(builder: NetworkBuilder, part: ResolvedPart, r
       },
     );
   }
-  for (const rating of part.type.ratings) ratingLimit(builder, part, rating, rules, rule);
+  for (const rating of part.type.ratings) ratingLimit(builder, part, rating, rules, rule, air);
   const curve = part.type.deratingCurve;
   if (curve && (curve.quantity !== 'powerW' || !part.type.ratings.some((rating) => rating.quantity === 'powerW'))) {
     builder.warnings.push({

@@ -47,6 +47,7 @@ export const defaults = {
   standOffM: preset('Stand-off', 0.005, 0.008, 'm'),
   heatW: preset('Heat', 10, 5, 'W'),
   lightKeptShare: preset('Light kept inside', 0.3, 0.15, ''),
+  positions: preset('Positions', 'spread evenly', 'spread evenly', ''),
   airC: preset('Air temperature', 40, 25, '°C'),
 } as const;
 

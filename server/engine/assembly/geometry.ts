@@ -1,7 +1,7 @@
 import { faceNames, type FaceName } from '../../../shared/schemas/assembly.js';
 
 /** Axis of each face’s normal: 0 = x (left to right), 1 = y (front to back), 2 = z (bottom to top). */
-const normalAxis: Record<FaceName, 0 | 1 | 2> = { left: 0, right: 0, front: 1, back: 1, bottom: 2, top: 2 };
+export const normalAxis: Record<FaceName, 0 | 1 | 2> = { left: 0, right: 0, front: 1, back: 1, bottom: 2, top: 2 };
 
 export const opposite: Record<FaceName, FaceName> = {
   left: 'right',
@@ -12,11 +12,8 @@ export const opposite: Record<FaceName, FaceName> = {
   top: 'bottom',
 };
 
-/** Which way a surface looks, in the pose of use. */
-export type Facing = 'up' | 'down' | 'sideways';
-
 /** The two axes that span a face, in the document’s order (its local x and y). */
-function spanAxes(face: FaceName): [0 | 1 | 2, 0 | 1 | 2] {
+export function spanAxes(face: FaceName): [0 | 1 | 2, 0 | 1 | 2] {
   const axis = normalAxis[face];
   if (axis === 0) return [1, 2];
   return axis === 1 ? [0, 2] : [0, 1];
@@ -40,22 +37,11 @@ export function innerSize(
   ];
 }
 
-/** Which way the outside of a face looks when the face `up` looks up. */
-export function outsideFacing(face: FaceName, up: FaceName): Facing {
-  if (face === up) return 'up';
-  return face === opposite[up] ? 'down' : 'sideways';
-}
-
-/** The other way. */
-export function turned(facing: Facing): Facing {
-  if (facing === 'up') return 'down';
-  return facing === 'down' ? 'up' : 'sideways';
-}
-
-/** Vertical extent of a sideways face [m]: the size along the axis that looks up. */
-export function verticalExtent(face: FaceName, up: FaceName, size: readonly [number, number]): number {
-  const [u] = spanAxes(face);
-  return u === normalAxis[up] ? size[0] : size[1];
+/** Name of the edge of face `a`, in its own plane, at which it meets face `b`. */
+export function edgeTowards(a: FaceName, b: FaceName): 'x0' | 'x1' | 'y0' | 'y1' {
+  const [u] = spanAxes(a);
+  const axis = normalAxis[b] === u ? 'x' : 'y';
+  return `${axis}${b === 'right' || b === 'back' || b === 'top' ? '1' : '0'}`;
 }
 
 /** An edge that two faces share, with how far the middle of each lies from it [m]. */

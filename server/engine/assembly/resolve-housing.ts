@@ -2,6 +2,7 @@ import {
   faceNames,
   type AssemblyDocument,
   type FaceName,
+  type Housing,
   type PrintSettings,
   type Wall,
 } from '../../../shared/schemas/assembly.js';
@@ -12,7 +13,7 @@ import { defaults, typicalPolymer, unknownPolymer } from './defaults.js';
 import { opposite } from './geometry.js';
 import { lookUp } from '../tables.js';
 import { contentOf } from './inline-values.js';
-import type { ResolvedFace } from './resolved.js';
+import type { Faces, ResolvedFace } from './resolved.js';
 
 /** Temperature at which walls’ conductivities are taken [°C]. */
 export const wallReferenceC = 50;
@@ -80,8 +81,13 @@ function resolvePrint(
     : { ...common, parallelToBed: false, alongLayers: through };
 }
 
-function resolveFace(document: AssemblyDocument, name: FaceName, assumptions: Assumptions): ResolvedFace {
-  const wall = document.housing.faces[name];
+function resolveFace(
+  document: AssemblyDocument,
+  housing: Housing,
+  name: FaceName,
+  assumptions: Assumptions,
+): ResolvedFace {
+  const wall = housing.faces[name];
   const path = `/housing/faces/${name}`;
   const wallM = assumptions.fill<number>(wall.wallM, `${path}/wallM`, 'wallM', defaults.wallM);
   let material: Material;
@@ -113,15 +119,16 @@ function resolveFace(document: AssemblyDocument, name: FaceName, assumptions: As
     emissivityOutside: resolveEmissivity(wall.finishOutside, material, `${path}/finishOutside`, 'outside', assumptions),
     emissivityInside: resolveEmissivity(wall.finishInside, material, `${path}/finishInside`, 'inside', assumptions),
     solarAbsorptance,
-    open: wall.exposure.kind === 'open',
+    exposure: wall.exposure,
     loadState: loadState as ResolvedFace['loadState'],
   };
 }
 
-/** All six faces with every value known. */
-export function resolveFaces(document: AssemblyDocument, assumptions: Assumptions): Record<FaceName, ResolvedFace> {
-  return Object.fromEntries(faceNames.map((name) => [name, resolveFace(document, name, assumptions)])) as Record<
-    FaceName,
-    ResolvedFace
-  >;
+/** All six faces with every value known; `null` for an open assembly. */
+export function resolveFaces(document: AssemblyDocument, assumptions: Assumptions): Faces | null {
+  const { housing } = document;
+  if (housing === null) return null;
+  return Object.fromEntries(
+    faceNames.map((name) => [name, resolveFace(document, housing, name, assumptions)]),
+  ) as Faces;
 }

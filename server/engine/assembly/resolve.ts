@@ -1,11 +1,12 @@
-import { faceNames, type AssemblyDocument } from '../../../shared/schemas/assembly.js';
+import { faceNames, type AssemblyDocument, type Housing } from '../../../shared/schemas/assembly.js';
 import { EngineError, type FieldError } from '../errors.js';
 import { Assumptions } from './assumptions.js';
 import { defaults } from './defaults.js';
-import { faceSize, innerSize } from './geometry.js';
+import { innerSize } from './geometry.js';
+import { upward } from './pose.js';
 import { resolveFaces } from './resolve-housing.js';
-import { resolveCarriers, resolveParts } from './resolve-parts.js';
-import type { ResolvedAssembly, ResolvedCarrier, ResolvedFace, ResolvedPart } from './resolved.js';
+import { resolveCarriers, resolveLeads, resolveParts } from './resolve-parts.js';
+import type { Faces, ResolvedAssembly, ResolvedPart, ResolvedScenario } from './resolved.js';
 
 /** Slack when sizes typed in millimetres are compared [m]. */
 const slack = 1e-6;
@@ -21,81 +22,42 @@ function repeated(items: readonly { id: string }[], list: string, what: string):
   });
 }
 
-function fits(size: readonly [number, number], room: readonly [number, number]): boolean {
-  const [a, b] = [...size].sort((p, q) => p - q) as [number, number];
-  const [c, d] = [...room].sort((p, q) => p - q) as [number, number];
-  return a <= c + slack && b <= d + slack;
-}
-
-/** A bank is taken as one body of the same total area: it must fit by area, one element by its sides. */
-function checkFit(part: ResolvedPart, room: readonly [number, number], where: string): FieldError[] {
-  const size = part.type.footprintM.value;
-  if (fits(size, room) && size[0] * size[1] * part.count <= room[0] * room[1] + slack * slack) return [];
-  return [{ path: `${part.path}/mount/on`, message: `${part.label} does not fit on ${where}` }];
-}
-
-function checkGeometry(
-  document: AssemblyDocument,
-  faces: Record<(typeof faceNames)[number], ResolvedFace>,
-  carriers: readonly ResolvedCarrier[],
-  parts: readonly ResolvedPart[],
-): FieldError[] {
-  const { outerM } = document.housing;
-  const inner = innerSize(outerM, {
-    top: faces.top.wallM,
-    bottom: faces.bottom.wallM,
-    front: faces.front.wallM,
-    back: faces.back.wallM,
-    left: faces.left.wallM,
-    right: faces.right.wallM,
-  });
+/** Whether the walls leave room inside, before anything is laid there. */
+function checkWalls(housing: Housing, faces: Faces): FieldError[] {
+  const inner = innerSize(
+    housing.outerM,
+    Object.fromEntries(faceNames.map((name) => [name, faces[name].wallM])) as Record<
+      (typeof faceNames)[number],
+      number
+    >,
+  );
   const tooThick = inner.findIndex((length) => length <= slack);
-  if (tooThick >= 0) {
-    return [
-      { path: `/housing/outerM/${String(tooThick)}`, message: 'The walls leave no room inside in this direction' },
-    ];
-  }
+  if (tooThick < 0) return [];
+  return [{ path: `/housing/outerM/${String(tooThick)}`, message: 'The walls leave no room inside in this direction' }];
+}
+
+/** What stands in the way of the air: fills, fans without an opening. */
+function checkAir(housing: Housing): FieldError[] {
   const errors: FieldError[] = [];
-  for (const carrier of carriers) {
-    if (!fits(carrier.sizeM, faceSize(carrier.face, inner))) {
-      errors.push({ path: `${carrier.path}/sizeM`, message: `It does not fit inside the ${carrier.face} face` });
+  const vented = faceNames.filter((name) => housing.faces[name].vents.length > 0);
+  if (housing.fan && vented.length === 0) {
+    errors.push({ path: '/housing/fan', message: 'A fan needs openings: add vents to the faces that the air passes' });
+  }
+  if (housing.fill.kind === 'foam') {
+    for (const name of vented) {
+      const path = `/housing/faces/${name}/vents`;
+      errors.push({ path, message: 'Foam fills the housing: no air passes these openings' });
     }
   }
-  for (const face of faceNames) {
-    const [u, v] = faceSize(face, inner);
-    const here = carriers.filter((carrier) => carrier.face === face && carrier.kind === 'plate');
-    const taken =
-      here.reduce((sum, carrier) => sum + carrier.sizeM[0] * carrier.sizeM[1], 0) +
-      parts.reduce(
-        (sum, part) =>
-          part.on.kind === 'face' && part.on.face === face
-            ? sum + part.count * part.type.footprintM.value[0] * part.type.footprintM.value[1]
-            : sum,
-        0,
-      );
-    if (taken > u * v + slack * slack) {
-      const last = here.at(-1)?.path ?? parts.find((part) => part.on.kind === 'face' && part.on.face === face)?.path;
-      errors.push({ path: last ?? `/housing/faces/${face}`, message: `The ${face} face has no room for all of this` });
-    }
-  }
-  for (const part of parts) {
-    const { on } = part;
-    if (on.kind === 'face') errors.push(...checkFit(part, faceSize(on.face, inner), `the ${on.face} face`));
-    else {
-      const carrier = carriers.find(({ id }) => id === on.carrier);
-      if (carrier) errors.push(...checkFit(part, carrier.sizeM, `“${carrier.id}”`));
-    }
-  }
-  for (const carrier of carriers) {
-    const taken = parts.reduce(
-      (sum, part) =>
-        part.on.kind === 'carrier' && part.on.carrier === carrier.id
-          ? sum + part.count * part.type.footprintM.value[0] * part.type.footprintM.value[1]
-          : sum,
-      0,
-    );
-    if (taken > carrier.sizeM[0] * carrier.sizeM[1] + slack * slack) {
-      errors.push({ path: `${carrier.path}/sizeM`, message: 'The parts on it need more room than it has' });
+  const curve = housing.fan?.curve;
+  if (curve) {
+    const rising = curve.every(([flow, pressure], i) => {
+      const before = curve[i - 1];
+      return !before || (flow > before[0] && pressure <= before[1]);
+    });
+    if (!rising) {
+      const message = 'A fan curve rises in flow and falls in pressure from point to point';
+      errors.push({ path: '/housing/fan/curve', message });
     }
   }
   return errors;
@@ -122,6 +84,26 @@ function checkDrive(drive: ResolvedAssembly['drive'], document: AssemblyDocument
   });
 }
 
+function resolveScenarios(document: AssemblyDocument, assumptions: Assumptions): ResolvedScenario[] {
+  return document.scenarios.map((scenario, i) => {
+    const path = `/scenarios/${String(i)}`;
+    const airC = assumptions.fill<number>(scenario.airC, `${path}/airC`, 'airC', defaults.airC);
+    const { housing } = document;
+    if (housing === null && scenario.pose !== null) {
+      const message = 'An open assembly has no pose: say of each carrier which way it looks';
+      throw new EngineError('invalid-document', message, [{ path: `${path}/pose`, message }]);
+    }
+    const pose = scenario.pose ?? housing?.pose ?? { up: 'top' as const, tiltDeg: 0, towards: null };
+    const up = upward(pose, scenario.pose ? `${path}/pose` : '/housing/pose');
+    return { ...scenario, path, airC, surroundingsC: scenario.surroundingsC ?? airC, up };
+  });
+}
+
+function refuse(errors: readonly FieldError[]): void {
+  if (errors.length === 0) return;
+  throw new EngineError('invalid-document', errors[0]?.message ?? 'The assembly cannot be computed', [...errors]);
+}
+
 /**
  * The document with every “don’t know” replaced by its default, and checked as a whole.
  *
@@ -131,32 +113,43 @@ function checkDrive(drive: ResolvedAssembly['drive'], document: AssemblyDocument
  */
 export function resolveAssembly(document: AssemblyDocument, typical?: ReadonlySet<string>): ResolvedAssembly {
   const assumptions = new Assumptions(typical);
+  const { housing } = document;
   const faces = resolveFaces(document, assumptions);
-  const carriers = resolveCarriers(document, faces, assumptions);
+  if (housing && faces) refuse([...checkWalls(housing, faces), ...checkAir(housing)]);
+  const { carriers, errors: carrierErrors } = resolveCarriers(document, faces, assumptions);
   const { parts, errors: partErrors } = resolveParts(document, faces, carriers, assumptions);
+  const { leads, errors: leadErrors } = resolveLeads(document, parts);
   const drive = resolveDrive(document, parts);
-  const errors = [
+  refuse([
     ...repeated(document.parts, 'parts', 'parts'),
     ...repeated(document.carriers, 'carriers', 'carriers'),
     ...repeated(document.supplies, 'supplies', 'supplies'),
     ...repeated(document.scenarios, 'scenarios', 'scenarios'),
     ...repeated(document.limits, 'limits', 'limits'),
+    ...repeated(document.leads, 'leads', 'leads'),
+    ...carrierErrors,
     ...partErrors,
-    ...checkGeometry(document, faces, carriers, parts),
+    ...leadErrors,
     ...checkDrive(drive, document, parts),
-  ];
-  if (errors.length > 0) {
-    throw new EngineError('invalid-document', errors[0]?.message ?? 'The assembly cannot be computed', errors);
-  }
-  const touched = assumptions.fill<string>(
-    document.housing.touched,
-    '/housing/touched',
-    'touched',
-    defaults.touched,
-  ) as ResolvedAssembly['touched'];
-  const scenarios = document.scenarios.map((scenario, i) => {
-    const airC = assumptions.fill<number>(scenario.airC, `/scenarios/${String(i)}/airC`, 'airC', defaults.airC);
-    return { ...scenario, airC, surroundingsC: scenario.surroundingsC ?? airC };
-  });
-  return { document, faces, carriers, parts, touched, scenarios, drive, assumptions: assumptions.list() };
+  ]);
+  const touched = housing
+    ? (assumptions.fill<string>(
+        housing.touched,
+        '/housing/touched',
+        'touched',
+        defaults.touched,
+      ) as ResolvedAssembly['touched'])
+    : 'no';
+  const scenarios = resolveScenarios(document, assumptions);
+  return {
+    document,
+    box: housing && faces ? { housing, faces } : null,
+    carriers,
+    parts,
+    leads,
+    touched,
+    scenarios,
+    drive,
+    assumptions: assumptions.list(),
+  };
 }

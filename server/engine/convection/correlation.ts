@@ -25,7 +25,8 @@ export interface Correlation {
   range: Range;
   /** The law that takes over when the surface is colder than its air and up and down change places. */
   mate?: string;
-  evaluate: (ra: number, pr: number, out: Nusselt) => void;
+  /** @param ratio length ÷ diameter, where the shape has one */
+  evaluate: (ra: number, pr: number, out: Nusselt, ratio?: number) => void;
 }
 
 /**

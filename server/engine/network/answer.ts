@@ -1,11 +1,8 @@
 import type { DeviceAnswer, LimitAnswer, SolveAnswer, Warning } from '../../../shared/schemas/network-answers.js';
 import type { NetworkLimit } from '../../../shared/schemas/network.js';
-import { blankFilmAir, filmAir } from '../air.js';
-import { gravity, zeroCelsius } from '../constants.js';
-import type { Correlation } from '../convection/correlation.js';
+import { zeroCelsius } from '../constants.js';
 import { resistanceAt } from '../devices/resistor.js';
 import { lookUp } from '../tables.js';
-import type { LinkLaw } from './link-laws.js';
 import type { SteadyState } from './newton.js';
 import type { PreparedNetwork } from './prepared.js';
 import { linkName } from './validate.js';
@@ -147,40 +144,18 @@ export function limitReader(network: PreparedNetwork, limit: NetworkLimit): Limi
   };
 }
 
-function outsideRange(
-  name: string,
-  { hot, cold, lengthM }: NonNullable<LinkLaw['convective']>,
-  ends: readonly [number, number],
-  pressurePa: number,
-): Warning[] {
-  const [a, b] = ends;
-  const correlation: Correlation = a >= b ? hot : cold;
-  const range = correlation.range.ra;
-  if (!range) return [];
-  filmAir((a + b) / 2, pressurePa, gravity, air);
-  const ra = air.rayleighFactor * Math.abs(a - b) * lengthM ** 3;
-  // Where next to nothing flows, being outside the range changes nothing.
-  if (Math.abs(a - b) < 0.05 || (ra >= range[0] && ra <= range[1])) return [];
-  const message =
-    `${name}: Ra = ${ra.toExponential(1)} lies outside the published range ` +
-    `${range[0].toExponential(0)} … ${range[1].toExponential(0)} of ${correlation.id} (${correlation.shape})`;
-  return [{ code: 'outside-range', link: name, message }];
-}
-
-const air = blankFilmAir();
-
 function rangeWarnings(network: PreparedNetwork): Warning[] {
   const { temperatures, document, films } = network;
+  const warn = (link: string, texts: readonly string[]): Warning[] =>
+    texts.map((text) => ({ code: 'outside-range', link, message: `${link}: ${text}` }));
   const ofLinks = document.links.flatMap((link, l) => {
     const placed = network.lawOf(l);
-    if (!placed?.law.convective) return [];
-    const ends = [temperatures[placed.from] ?? 0, temperatures[placed.to] ?? 0] as const;
-    return outsideRange(linkName(link, l), placed.law.convective, ends, document.pressurePa);
+    if (!placed?.law.outside) return [];
+    return warn(linkName(link, l), placed.law.outside(temperatures[placed.from] ?? 0, temperatures[placed.to] ?? 0));
   });
   const ofFilms = films.flatMap((film) => {
-    if (!film.law.convective) return [];
-    const airK = temperatures[film.air] ?? 0;
-    return outsideRange(film.id, film.law.convective, [airK + film.excess, airK], document.pressurePa);
+    const air = temperatures[film.air] ?? 0;
+    return warn(film.id, film.law.outside?.(air + film.excess, air) ?? []);
   });
   return [...ofLinks, ...ofFilms];
 }

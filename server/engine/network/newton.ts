@@ -194,6 +194,8 @@ function newton(network: PreparedNetwork, { base, step, weight, last }: Workspac
     if (!accepted) {
       network.temperatures.set(base);
       network.evaluate();
+      // No step makes it better, and the step says that the answer lies within the tolerance: rounding is all that is left.
+      if (largest <= stepTolerance) return iteration;
       if (!reuse) return -1;
       ratio = 1;
       continue;

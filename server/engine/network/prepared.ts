@@ -27,6 +27,13 @@ type SurfacePlace =
   | { kind: 'film'; film: CellFilm }
   | { kind: 'linear' | 'radiative'; from: number; to: number; areaM2: number; coefficient: number };
 
+/** Surfaces whose law gives one film coefficient for all their cells. */
+type FilmSurface = Exclude<GridSurface, { kind: 'radiation' | 'film' }>;
+
+function bringsFilm(surface: GridSurface): surface is FilmSurface {
+  return surface.kind !== 'radiation' && surface.kind !== 'film';
+}
+
 /**
  * A network ready to be solved, and solved again with other drives: structure, order and workspace are made once; `evaluate` allocates
  * nothing.
@@ -75,10 +82,7 @@ export class PreparedNetwork implements System {
     this.unknownCount = count;
     // Multipliers, then the rows of films; pairs ask for the number of rows only when all are known.
     const patchCount = grids.reduce((sum, { patches, free }) => sum + patches.length + Object.keys(free).length, 0);
-    const filmCount = grids.reduce(
-      (sum, { surfaces }) => sum + surfaces.filter(({ kind }) => kind === 'convection').length,
-      0,
-    );
+    const filmCount = grids.reduce((sum, { surfaces }) => sum + surfaces.filter(bringsFilm).length, 0);
     this.rows = count + patchCount + filmCount;
     this.size = this.rows;
     for (const node of nodes) if (node.fixedC !== undefined) this.index.set(node.id, this.size++);
@@ -98,7 +102,7 @@ export class PreparedNetwork implements System {
     for (const placed of this.grids) {
       this.placeCells(placed, pairs);
       for (const surface of placed.grid.surfaces) {
-        if (surface.kind === 'convection') late.push(nextRow);
+        if (bringsFilm(surface)) late.push(nextRow);
         nextRow = this.placeSurface(placed, surface, nextRow, pairs);
       }
     }
@@ -184,7 +188,7 @@ export class PreparedNetwork implements System {
   private placeSurface(placed: PlacedGrid, surface: GridSurface, row: number, pairs: Pairs): number {
     const { cells, areas, sum } = freeCells(placed, surface.side);
     const to = this.numberOf(surface.to);
-    if (surface.kind === 'convection') {
+    if (bringsFilm(surface)) {
       if (sum > 0) {
         const film = new CellFilm(surface.id, surfaceLaw(surface, this.document), cells, areas, to, row, pairs);
         this.films.push(film);
@@ -357,7 +361,7 @@ export class PreparedNetwork implements System {
     const out = { flow: 0, byFrom: 0, byTo: 0, film: 0 };
     const law = this.general.laws[place.at];
     law?.evaluate(a, b, out);
-    return law?.convective ? { flow: out.flow, film: out.film } : { flow: out.flow };
+    return law?.hasFilm ? { flow: out.flow, film: out.film } : { flow: out.flow };
   }
 
   /** The law of a link that has a film coefficient or a range, with its ends. */

@@ -1,6 +1,7 @@
 import type { SolveAnswer } from '../../../shared/schemas/network-answers.js';
 import type { NetworkDocument } from '../../../shared/schemas/network.js';
-import { secondCorrelation } from '../convection/registry.js';
+import { channelCorrelations } from '../convection/channel.js';
+import { secondCorrelation, type ConvectionShape } from '../convection/registry.js';
 import { EngineError } from '../errors.js';
 import { networkAnswer, temperaturesC } from './answer.js';
 import { firstGuess, solveSteady } from './newton.js';
@@ -11,9 +12,21 @@ export function withSecondCorrelations(document: NetworkDocument): NetworkDocume
   return {
     ...document,
     links: document.links.map((link) => {
-      const second = link.kind === 'convection' ? secondCorrelation(link.shape) : undefined;
+      const second =
+        link.kind === 'convection'
+          ? secondCorrelation(link.shape)
+          : link.kind === 'channel'
+            ? channelCorrelations[1]
+            : undefined;
       return second ? { ...link, correlation: second.id } : link;
     }),
+    grids: document.grids.map((grid) => ({
+      ...grid,
+      surfaces: grid.surfaces.map((surface) => {
+        const second = surface.kind === 'convection' ? secondCorrelation(surface.shape as ConvectionShape) : undefined;
+        return second ? { ...surface, correlation: second.id } : surface;
+      }),
+    })),
   };
 }
 

@@ -130,6 +130,15 @@ export function joinGrids(
 }
 
 function surfaceCarries(surface: NetworkGrid['surfaces'][number]): boolean {
-  if (surface.kind === 'convection') return surface.scale > 0;
-  return surface.kind === 'film' ? surface.coefficientWPerM2K > 0 : surface.emissivity * surface.areaFactor > 0;
+  switch (surface.kind) {
+    case 'convection':
+      return surface.scale > 0;
+    case 'film':
+      return surface.coefficientWPerM2K > 0;
+    case 'radiation':
+      return surface.emissivity * surface.areaFactor > 0;
+    case 'air-gap':
+    case 'fin-array':
+      return true;
+  }
 }

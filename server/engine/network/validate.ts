@@ -1,4 +1,5 @@
 import type { NetworkDocument, NetworkLink, NetworkNode, NetworkSource } from '../../../shared/schemas/network.js';
+import { channelCorrelations, findChannelCorrelation } from '../convection/channel.js';
 import { correlations, findCorrelation } from '../convection/registry.js';
 import { checkGrids, joinGrids } from './validate-grids.js';
 import { EngineError, type EngineErrorCode, type FieldError } from '../errors.js';
@@ -26,6 +27,17 @@ export function carriesHeat(link: NetworkLink): boolean {
         link.viewFactor !== 0 &&
         (link.emissivityTo === undefined || (link.emissivityTo > 0 && link.areaToM2 !== 0))
       );
+    case 'air-gap':
+    case 'channel':
+      return link.areaM2 > 0;
+    case 'fin-array':
+      return true;
+    case 'ventilation': {
+      if (link.flowM3PerS !== undefined) return link.flowM3PerS > 0;
+      const closed = link.dischargeCoefficient === 0 || link.inletAreaM2 === 0 || link.outletAreaM2 === 0;
+      if (link.fanCurve) return !closed && link.fanCurve.some(([flow]) => flow > 0);
+      return !closed && (link.heightM ?? 0) > 0;
+    }
   }
 }
 
@@ -88,6 +100,7 @@ function checkLink(link: NetworkLink, index: number, nodes: ReadonlyMap<string, 
       link: name,
     });
   }
+  checkShape(link, path, name, findings);
   if (link.kind === 'radiation' && link.emissivityTo !== undefined) {
     const seen = (link.viewFactor ?? 1) * link.areaM2;
     if (seen > (link.areaToM2 ?? link.areaM2) * (1 + 1e-12)) {
@@ -96,6 +109,74 @@ function checkLink(link: NetworkLink, index: number, nodes: ReadonlyMap<string, 
         message: `Link “${name}”: view factor × area must not exceed the other area (reciprocity)`,
         link: name,
       });
+    }
+  }
+}
+
+/** What a link’s kind or shape needs beyond what every one has. */
+function checkShape(link: NetworkLink, path: string, name: string, findings: Findings): void {
+  const refuse = (field: string, message: string) => {
+    findings.add('invalid-document', { path: `${path}/${field}`, message: `Link “${name}”: ${message}`, link: name });
+  };
+  switch (link.kind) {
+    case 'convection':
+      if (link.shape === 'inclined-plate' && link.tiltDeg === undefined) {
+        refuse('tiltDeg', 'an inclined plate needs its tilt');
+      }
+      if (link.shape === 'vertical-cylinder' && link.diameterM === undefined) {
+        refuse('diameterM', 'a vertical cylinder needs its diameter');
+      }
+      return;
+    case 'channel':
+      if (!findChannelCorrelation(link.correlation)) {
+        const known = channelCorrelations.map(({ id }) => id).join(', ');
+        findings.add('unknown-reference', {
+          path: `${path}/correlation`,
+          message: `There is no correlation “${link.correlation ?? ''}” for a channel; there are ${known}`,
+          link: name,
+        });
+      }
+      return;
+    case 'fin-array':
+      if (link.finCount * link.finThicknessM >= link.baseWidthM) {
+        refuse('finCount', 'so many fins of this thickness leave no gap between them');
+      }
+      if (link.tiltDeg > steepestChannel) {
+        refuse('tiltDeg', 'there is no published law for fins that lean more than 45°');
+      }
+      return;
+    case 'ventilation':
+      checkVentilation(link, refuse);
+      return;
+    default:
+  }
+}
+
+/** Lean of fins beyond which no published law is at hand [°]. */
+const steepestChannel = 45;
+
+function checkVentilation(
+  link: Extract<NetworkLink, { kind: 'ventilation' }>,
+  refuse: (field: string, message: string) => void,
+): void {
+  if (link.flowM3PerS !== undefined) {
+    if (link.fanCurve) refuse('fanCurve', 'it has a given flow already');
+    return;
+  }
+  if (link.fanCurve) {
+    if (link.inletAreaM2 === undefined && link.outletAreaM2 === undefined) {
+      refuse('inletAreaM2', 'a fan needs the area of the openings before it');
+    }
+    const falling = link.fanCurve.every(([flow, pressure], i) => {
+      const before = link.fanCurve?.[i - 1];
+      return !before || (flow > before[0] && pressure <= before[1]);
+    });
+    if (!falling) refuse('fanCurve', 'a fan curve rises in flow and falls in pressure from point to point');
+    return;
+  }
+  for (const field of ['inletAreaM2', 'outletAreaM2', 'heightM'] as const) {
+    if (link[field] === undefined) {
+      refuse(field, 'without a given flow it needs both openings and the height between them');
     }
   }
 }
