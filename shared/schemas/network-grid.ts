@@ -85,6 +85,8 @@ export const gridSchema = z.strictObject({
     .default([]),
   /** Film coefficient that the cell size is chosen by; it enters no heat flow. */
   filmForCellsWPerM2K: positive(1e5, 'W/(m² K)', 'The film').default(15),
+  /** Cell size beside sources, in place of a third of √(k t/h): so that like grids have like cells. */
+  finestCellM: positive(10, 'm', 'The cell size').optional(),
   /** Divides all cells by this number in both directions: a check of the grid itself. */
   refine: z.number().int().min(1).max(8).default(1),
   /** Where a node of the document is joined: its heat enters evenly over the rectangle, its temperature is the mean there. */

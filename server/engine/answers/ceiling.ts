@@ -1,164 +1,89 @@
 import type { CeilingAnswer, Drive } from '../../../shared/schemas/network-answers.js';
 import type { NetworkDocument, NetworkLimit } from '../../../shared/schemas/network.js';
-import { EngineError } from '../errors.js';
-import { deviceAnswers, limitReader, type LimitReader } from '../network/answer.js';
-import { firstGuess, solveSteady } from '../network/newton.js';
-import { PreparedNetwork } from '../network/prepared.js';
+import { deviceAnswers, type LimitReader } from '../network/answer.js';
+import type { PreparedNetwork } from '../network/prepared.js';
+import { Trajectory, type Point } from './trajectory.js';
 
-/** Multiples of the present drive that are scanned: zero, then growing by this factor up to the end of the range. */
+/** Multiples of the present drive that are scanned: zero, then growing by a factor up to the end of the range. */
 const range: [number, number] = [0, 100];
-const firstScan = 0.01;
-const scanFactor = 1.4;
-/** A crossing is bracketed to this share of itself. */
-const bracket = 1e-7;
-const mostRefinements = 60;
+/** Fine steps for small networks; for large ones, whose every solution is dear, coarse ones: the cubics between them know the slopes. */
+const fineScan = { first: 0.01, factor: 1.4, upTo: 250 };
+const coarseScan = { first: 0.0625, factor: 2 };
+/** In a large network crossings are looked for up to this multiple of the least one. */
+const farEnough = 8;
+/** Places between two drives where the cubics are looked at, so that a limit crossed there and back is not missed. */
+const looks = 8;
+/** A crossing is found to this share of itself. */
+const bracket = 3e-8;
+/** Crossings this near to the least one are found as exactly as that. */
+const contender = 0.02;
+const mostRefinements = 40;
 
-/** A network whose drive can be set to any multiple of the present one. */
-class DrivenNetwork {
-  readonly network: PreparedNetwork;
-  private readonly setDrive: (scale: number) => void;
-  /** Temperatures of the last solved drive, to start the next from. */
-  private readonly warm: Float64Array;
+interface Crossing {
+  limit: number;
+  scale: number;
+}
 
-  constructor(document: NetworkDocument, drive: Drive) {
-    this.network = new PreparedNetwork(document);
-    this.setDrive = driveSetter(this.network, drive);
-    this.warm = Float64Array.from(this.network.temperatures);
-    this.setDrive(0);
-    firstGuess(this.network);
-    this.warm.set(this.network.temperatures);
-  }
-
-  /** Solves at a multiple of the present drive; false where there is no steady state. */
-  solve(scale: number): boolean {
-    this.setDrive(scale);
-    this.network.temperatures.set(this.warm);
-    try {
-      solveSteady(this.network);
-    } catch (error) {
-      if (
-        error instanceof EngineError &&
-        (error.code === 'runaway' || error.code === 'not-converged' || error.code === 'outside-range')
-      )
-        return false;
-      throw error;
+/** First crossing of a limit along the points known; `null` without any. */
+function firstCrossing(trajectory: Trajectory, limit: number): number | null {
+  const { points } = trajectory;
+  for (let p = 1; p < points.length; p++) {
+    const a = points[p - 1] as Point;
+    const b = points[p] as Point;
+    let from = a.scale;
+    for (let look = 1; look <= looks; look++) {
+      const to = look === looks ? b.scale : a.scale + ((b.scale - a.scale) * look) / looks;
+      const excess = look === looks ? trajectory.excessAt(limit, b) : trajectory.excessBetween(limit, a, b, to);
+      if (excess > 0) return bisect(from, to, (scale) => trajectory.excessBetween(limit, a, b, scale));
+      from = to;
     }
-    this.warm.set(this.network.temperatures);
-    return true;
   }
+  return null;
+}
+
+function bisect(low: number, high: number, excess: (scale: number) => number): number {
+  let a = low;
+  let b = high;
+  for (let i = 0; i < 60 && b - a > 1e-12 * b; i++) {
+    const middle = (a + b) / 2;
+    if (excess(middle) > 0) b = middle;
+    else a = middle;
+  }
+  return a;
 }
 
 /**
- * What “× scale” means: the supply’s current, or of each named source its given heat, its current (its supply’s, where it has
- * one) and its output power. Where the present drive is zero the scale counts in amperes or watts.
+ * Finds a crossing exactly: solves where the cubic says it is, which makes the cubic better there, until two solved drives hold it between them
+ * within the bracket. Returns the lower, at which the limit holds; `null` where there is no steady state up to it.
  */
-function driveSetter(network: PreparedNetwork, drive: Drive): (scale: number) => void {
-  const { document, sources } = network;
-  if ('supply' in drive) {
-    const index = document.supplies.findIndex(({ id }) => id === drive.supply);
-    const supply = document.supplies[index];
-    if (!supply) {
-      const message = `There is no supply “${drive.supply}”`;
-      throw new EngineError('unknown-reference', message, [{ path: '/drive/supply', message }]);
-    }
-    const base = supply.currentA > 0 ? supply.currentA : 1;
-    return (scale) => {
-      sources.supplyCurrents[index] = base * scale;
-    };
-  }
-  const setters = drive.sources.map((id, i) => {
-    const node = document.nodes.find((candidate) => candidate.id === id);
-    const path = `/drive/sources/${String(i)}`;
-    if (!node || node.fixedC !== undefined) {
-      const message = node ? `“${id}” has a fixed temperature and makes no heat` : `There is no node “${id}”`;
-      throw new EngineError('unknown-reference', message, [{ path, message, node: id }]);
-    }
-    const n = network.numberOf(id);
-    const { source, heatW } = node;
-    const supply = source?.supply === undefined ? -1 : document.supplies.findIndex((s) => s.id === source.supply);
-    const supplyA = document.supplies[supply]?.currentA ?? 0;
-    const ownA = source && source.kind !== 'converter' && supply < 0 ? (source.currentA ?? 0) : undefined;
-    const outputW = source?.kind === 'converter' ? source.outputW : undefined;
-    // Only a bare node is driven by heat alone, and only there a zero means watts.
-    const baseHeat = source ? heatW : heatW === undefined || heatW === 0 ? 1 : heatW;
-    return (scale: number) => {
-      if (baseHeat !== undefined) sources.givenHeat[n] = baseHeat * scale;
-      if (supply >= 0) sources.supplyCurrents[supply] = (supplyA > 0 ? supplyA : 1) * scale;
-      if (ownA !== undefined) sources.ownCurrents[n] = (ownA > 0 ? ownA : 1) * scale;
-      if (outputW !== undefined) sources.outputs[n] = (outputW > 0 ? outputW : 1) * scale;
-    };
-  });
-  return (scale) => {
-    for (const set of setters) set(scale);
-  };
-}
-
-interface Crossing {
-  reader: LimitReader;
-  /** Scale below which the limit holds, and the excess there; the same above. `high` is infinite until it has been crossed. */
-  low: number;
-  lowExcess: number;
-  high: number;
-  highExcess: number;
-}
-
-/** Narrows all brackets by what the network says at one scale. */
-function record(crossings: readonly Crossing[], scale: number): void {
-  for (const crossing of crossings) {
-    if (scale <= crossing.low || scale >= crossing.high) continue;
-    const excess = crossing.reader.excess();
-    if (excess > 0) {
-      crossing.high = scale;
-      crossing.highExcess = excess;
-    } else {
-      crossing.low = scale;
-      crossing.lowExcess = excess;
-    }
-  }
-}
-
-/** Next scale to try in a bracket: where the chord crosses zero, with a bisection whenever the last try kept the same end. */
-function refine(driven: DrivenNetwork, crossings: readonly Crossing[], target: Crossing): void {
-  let side = 0;
-  let lowWeight = target.lowExcess;
-  let highWeight = target.highExcess;
+function refine(trajectory: Trajectory, limit: number): number | null {
   for (let i = 0; i < mostRefinements; i++) {
-    const { low, high } = target;
-    if (high - low <= bracket * high) return;
-    const chord = low + ((high - low) * -lowWeight) / (highWeight - lowWeight);
-    // A step just past the chord’s crossing closes the bracket from the other side.
-    const edge = Math.max(bracket * high * 0.3, (high - low) * 1e-3);
-    const tryAt = i % 8 === 7 ? (low + high) / 2 : Math.min(Math.max(chord, low + edge), high - edge);
-    // No steady state here: that is a runaway below this crossing, and what the limit would be is not known.
-    if (!driven.solve(tryAt)) {
-      target.high = Infinity;
-      return;
-    }
-    const before = target.low;
-    record(crossings, tryAt);
-    // Illinois: halve the weight of an end that stays.
-    if (target.low > before) {
-      lowWeight = target.lowExcess;
-      highWeight = side === 1 ? highWeight / 2 : target.highExcess;
-      side = 1;
-    } else {
-      highWeight = target.highExcess;
-      lowWeight = side === -1 ? lowWeight / 2 : target.lowExcess;
-      side = -1;
-    }
+    const scale = firstCrossing(trajectory, limit);
+    if (scale === null) return null;
+    const { points } = trajectory;
+    const next = points.findIndex((point) => point.scale > scale);
+    const above = points[next];
+    const below = points[next - 1];
+    if (!above || !below) return null;
+    if (above.scale - below.scale <= bracket * above.scale && trajectory.excessAt(limit, above) > 0) return below.scale;
+    // Once near, step to just beyond it on the side that is still open, so that the bracket closes.
+    const near = 0.4 * bracket * above.scale;
+    const open = scale - below.scale > above.scale - scale ? -near : near;
+    const closing = Math.min(scale - below.scale, above.scale - scale) < 1e-3 * (above.scale - below.scale);
+    const tryAt = Math.min(Math.max(scale + (closing ? open : 0), below.scale + near / 2), above.scale - near / 2);
+    if (!trajectory.solve(tryAt)) return null;
   }
+  return firstCrossing(trajectory, limit);
 }
 
 /** Highest scale with a steady state, between one that has it and one that has not. */
-function runawayScale(driven: DrivenNetwork, crossings: readonly Crossing[], holds: number, fails: number): number {
+function runawayScale(trajectory: Trajectory, holds: number, fails: number): number {
   let low = holds;
   let high = fails;
   while (high - low > 1e-5 * high) {
     const middle = (low + high) / 2;
-    if (driven.solve(middle)) {
-      low = middle;
-      record(crossings, middle);
-    } else high = middle;
+    if (trajectory.solve(middle)) low = middle;
+    else high = middle;
   }
   return low;
 }
@@ -174,76 +99,90 @@ function hottestSource(network: PreparedNetwork): string {
   }, first).id;
 }
 
+/** Solves along the drive until every limit asked for has been crossed, or there is no steady state any more. */
+function scan(
+  trajectory: Trajectory,
+  onlyBinding: boolean,
+): { last: number; runaway?: NonNullable<CeilingAnswer['runaway']> } {
+  const { readers, network } = trajectory;
+  const steps = network.unknownCount <= fineScan.upTo ? fineScan : coarseScan;
+  const open = new Set(readers.keys());
+  let last = 0;
+  let least = Infinity;
+  for (let scale = steps.first; ; scale = Math.min(scale * steps.factor, range[1])) {
+    const point = trajectory.solve(scale);
+    if (!point) {
+      const highest = runawayScale(trajectory, last, scale);
+      trajectory.settle(highest);
+      return { last: highest, runaway: { scale: highest, node: hottestSource(network) } };
+    }
+    last = scale;
+    for (const limit of open) if (trajectory.excessAt(limit, point) > 0) open.delete(limit);
+    const crossed = readers.length - open.size;
+    if (crossed > 0) least = Math.min(least, scale);
+    if (steps === coarseScan && scale >= farEnough * least) return { last };
+    // Without any limit the scan goes on for a runaway.
+    if (scale >= range[1] || (readers.length > 0 && (open.size === 0 || (onlyBinding && crossed > 0)))) return { last };
+  }
+}
+
 /**
- * The largest drive at which every limit holds: a scan from zero, then each first crossing bracketed to a part in ten million.
+ * The largest drive at which every limit holds: a scan from zero, then the first crossing found to a few parts in a hundred million.
  *
  * @param drive what is varied; the scale is a multiple of the present drive, or amperes (watts) where that is zero
- * @param options `limits`: further temperature limits; `onlyBinding`: bracket only the least crossing, which is faster
- * @returns scale, drive and power at the ceiling, what binds, and each limit’s own crossing (`null`: none within range)
+ * @param options `limits`: further temperature limits; `onlyBinding`: find only the least crossing, which is faster; `near`:
+ * a like network to start from
+ * @returns scale, drive and power at the ceiling, what binds, and each limit’s own crossing (`null`: none within range). In a large
+ * network the crossings well above the least one are read off the cubics between solved drives, to about a part in a thousand.
  * @throws EngineError for an invalid document or drive
  */
 export function findCeiling(
   document: NetworkDocument,
   drive: Drive,
-  options: { limits?: readonly { node: string; maxC: number }[] | undefined; onlyBinding?: boolean } = {},
+  options: {
+    limits?: readonly { node: string; maxC: number }[] | undefined;
+    onlyBinding?: boolean;
+    near?: PreparedNetwork | undefined;
+  } = {},
 ): CeilingAnswer {
   const further: NetworkLimit[] = (options.limits ?? []).map(({ node, maxC }, i) => ({
     id: `further-${String(i + 1)}`,
     node,
     maxC,
   }));
-  const driven = new DrivenNetwork({ ...document, limits: [...document.limits, ...further] }, drive);
-  const { network } = driven;
-  const crossings: Crossing[] = network.document.limits.map((limit) => ({
-    reader: limitReader(network, limit),
-    low: -1,
-    lowExcess: 0,
-    high: Infinity,
-    highExcess: 0,
-  }));
+  const trajectory = new Trajectory({ ...document, limits: [...document.limits, ...further] }, drive, options.near);
+  return ceilingAlong(trajectory, drive, options.onlyBinding ?? false);
+}
 
-  let runaway: CeilingAnswer['runaway'];
-  let last = 0;
-  for (let scale = 0; ; scale = scale === 0 ? firstScan : Math.min(scale * scanFactor, range[1])) {
-    if (!driven.solve(scale)) {
-      if (scale === 0) return atZero(driven, crossings, { scale: 0, node: hottestSource(network) });
-      const highest = runawayScale(driven, crossings, last, scale);
-      driven.solve(highest);
-      runaway = { scale: highest, node: hottestSource(network) };
-      break;
-    }
-    record(crossings, scale);
-    if (crossings.some(({ high }) => high === 0)) return atZero(driven, crossings);
-    last = scale;
-    // Without any limit the scan goes on for a runaway.
-    const open = crossings.length === 0 || crossings.some(({ high }) => high === Infinity);
-    if (scale >= range[1] || !open || (options.onlyBinding && crossings.some(({ high }) => high < Infinity))) break;
+/** The same along a trajectory of the caller’s own, which keeps the solved drives. */
+export function ceilingAlong(trajectory: Trajectory, drive: Drive, onlyBinding: boolean): CeilingAnswer {
+  const { network, readers } = trajectory;
+
+  const zero = trajectory.solve(0);
+  if (!zero) return atZero(trajectory, null, { scale: 0, node: hottestSource(network) });
+  if (readers.some((_, limit) => trajectory.excessAt(limit, zero) > 0)) return atZero(trajectory, zero);
+  const { last, runaway } = scan(trajectory, onlyBinding);
+
+  const crossings = readers.flatMap((_, limit): Crossing[] => {
+    const scale = firstCrossing(trajectory, limit);
+    return scale === null ? [] : [{ limit, scale }];
+  });
+  const fine = network.unknownCount <= fineScan.upTo;
+  const least = () => crossings.reduce((scale, crossing) => Math.min(scale, crossing.scale), Infinity);
+  // From the least on, as long as one could still be the least or all are wanted exactly.
+  crossings.sort((a, b) => a.scale - b.scale);
+  for (const crossing of crossings) {
+    const wanted = fine && !onlyBinding ? Infinity : least() * (1 + (onlyBinding ? 1e-3 : contender));
+    if (crossing.scale > wanted) continue;
+    crossing.scale = refine(trajectory, crossing.limit) ?? Infinity;
   }
-
-  const crossed = crossings.filter(({ high }) => high < Infinity);
-  if (options.onlyBinding) {
-    // Only those whose bracket reaches below the least upper end can bind.
-    for (;;) {
-      const least = crossed.reduce<Crossing | undefined>(
-        (a, b) => (a === undefined || b.high < a.high ? b : a),
-        undefined,
-      );
-      if (!least || least.high - least.low <= bracket * least.high) break;
-      refine(driven, crossed, least);
-      if (crossed.every((c) => c.high >= least.high)) break;
-    }
-  } else {
-    for (const crossing of crossed) refine(driven, crossed, crossing);
-  }
-
-  const binding = crossed.reduce<Crossing | undefined>(
-    (a, b) => (a === undefined || b.high < a.high ? b : a),
-    undefined,
-  );
-  const perLimit = crossings.map(({ reader, high, low }) => ({ id: reader.id, scale: high < Infinity ? low : null }));
-  if (runaway && (!binding || runaway.scale < binding.low)) {
+  const found = crossings.filter(({ scale }) => scale < Infinity);
+  const binding = found.reduce<Crossing | undefined>((a, b) => (a && a.scale <= b.scale ? a : b), undefined);
+  const scaleOf = new Map(found.map(({ limit, scale }) => [limit, scale]));
+  const perLimit = readers.map(({ id }, limit) => ({ id, scale: scaleOf.get(limit) ?? null }));
+  if (runaway && (!binding || runaway.scale < binding.scale)) {
     return {
-      ...drawn(driven, drive, runaway.scale),
+      ...drawn(trajectory, drive, runaway.scale),
       status: 'runaway',
       binds: { kind: 'runaway', id: runaway.node, node: runaway.node },
       perLimit,
@@ -251,14 +190,52 @@ export function findCeiling(
       runaway,
     };
   }
-  const scale = binding ? Math.max(binding.low, 0) : last;
   return {
-    ...drawn(driven, drive, scale),
+    ...drawn(trajectory, drive, binding ? binding.scale : last),
     status: binding ? 'found' : 'no-limit-within-range',
-    binds: binding ? bindsOf(binding.reader) : null,
+    binds: binding ? bindsOf(readers[binding.limit] as LimitReader) : null,
     perLimit,
     range,
     ...(runaway ? { runaway } : {}),
+  };
+}
+
+/**
+ * The ceiling of a network that breaks a limit at a drive, looked for just below it: for one that is nearly another whose ceiling is known.
+ *
+ * @param above a drive at which a limit is broken
+ * @returns `null` where nothing holds down to a tenth of it
+ */
+export function ceilingBelow(trajectory: Trajectory, drive: Drive, above: number): CeilingAnswer | null {
+  const { readers } = trajectory;
+  const holds = (point: Point) => readers.every((_, limit) => trajectory.excessAt(limit, point) <= 0);
+  if (!trajectory.points.some(({ scale }) => scale === above) && !trajectory.solve(above)) return null;
+  let low = above;
+  let point: Point | null = null;
+  do {
+    low *= 0.9;
+    point = trajectory.solve(low);
+  } while (point && !holds(point) && low > 0.1 * above);
+  if (!point || !holds(point)) return null;
+  const crossings = readers.flatMap((_, limit): Crossing[] => {
+    const scale = firstCrossing(trajectory, limit);
+    return scale === null ? [] : [{ limit, scale }];
+  });
+  crossings.sort((a, b) => a.scale - b.scale);
+  let best: Crossing | null = null;
+  for (const crossing of crossings) {
+    if (best && crossing.scale > best.scale * 1.001) break;
+    const scale = refine(trajectory, crossing.limit);
+    if (scale !== null && (!best || scale < best.scale)) best = { limit: crossing.limit, scale };
+  }
+  if (!best) return null;
+  const { limit, scale } = best;
+  return {
+    ...drawn(trajectory, drive, scale),
+    status: 'found',
+    binds: bindsOf(readers[limit] as LimitReader),
+    perLimit: readers.map(({ id }, i) => ({ id, scale: i === limit ? scale : null })),
+    range,
   };
 }
 
@@ -266,32 +243,35 @@ function bindsOf(reader: LimitReader): NonNullable<CeilingAnswer['binds']> {
   return { kind: reader.kind, id: reader.id, ...(reader.node === undefined ? {} : { node: reader.node }) };
 }
 
-function atZero(
-  driven: DrivenNetwork,
-  crossings: readonly Crossing[],
-  runaway?: CeilingAnswer['runaway'],
-): CeilingAnswer {
-  const exceeded = crossings.find(({ high }) => high === 0);
+function atZero(trajectory: Trajectory, zero: Point | null, runaway?: CeilingAnswer['runaway']): CeilingAnswer {
+  const { readers, network } = trajectory;
+  const isExceeded = (limit: number) => zero !== null && trajectory.excessAt(limit, zero) > 0;
+  const exceeded = readers.find((_, limit) => isExceeded(limit));
   return {
     status: 'exceeded-at-zero',
     scale: 0,
     electricalW: 0,
-    heatW: driven.network.sources.heat.reduce((sum, heat) => sum + heat, 0),
-    binds: exceeded ? bindsOf(exceeded.reader) : { kind: 'runaway', id: runaway?.node ?? '', node: runaway?.node },
-    perLimit: crossings.map(({ reader, high }) => ({ id: reader.id, scale: high === 0 ? 0 : null })),
+    heatW: network.sources.heat.reduce((sum, heat) => sum + heat, 0),
+    binds: exceeded ? bindsOf(exceeded) : { kind: 'runaway', id: runaway?.node ?? '', node: runaway?.node },
+    perLimit: readers.map(({ id }, limit) => ({ id, scale: isExceeded(limit) ? 0 : null })),
     range,
     ...(runaway ? { runaway } : {}),
   };
 }
 
 /** Drive and power at a scale: electrical at the devices’ terminals and given heats, and all that becomes heat. */
-function drawn(driven: DrivenNetwork, drive: Drive, scale: number) {
-  driven.solve(scale);
-  const { network } = driven;
+function drawn(trajectory: Trajectory, drive: Drive, scale: number) {
+  trajectory.settle(scale);
+  const { network } = trajectory;
   const devices = Object.values(deviceAnswers(network, true));
   const given = network.sources.givenHeat.reduce((sum, heat) => sum + heat, 0);
   const electricalW = devices.reduce((sum, device) => sum + (device.electricalW ?? device.heatW), given);
   const heatW = network.sources.heat.reduce((sum, heat) => sum + heat, 0);
   const index = 'supply' in drive ? network.document.supplies.findIndex(({ id }) => id === drive.supply) : -1;
-  return { scale, ...(index >= 0 ? { currentA: network.sources.supplyCurrents[index] ?? 0 } : {}), electricalW, heatW };
+  return {
+    scale,
+    ...(index >= 0 ? { currentA: network.sources.supplyCurrents[index] ?? 0 } : {}),
+    electricalW,
+    heatW,
+  };
 }

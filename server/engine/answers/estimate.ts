@@ -36,7 +36,7 @@ function assumptionEffects(
     const other = resolveAssembly(document, new Set([key]));
     const scenario = other.scenarios.find(({ id }) => id === chosen.scenario.id) ?? chosen.scenario;
     const compiled = compileAssembly(other, scenario, rules);
-    const answer = solveNetwork(compiled.network);
+    const answer = solveNetwork(compiled.network, { near: chosen.network });
     const members = new Set(compiled.limits.filter(({ group }) => group === line.id).map(({ id }) => id));
     const margins = answer.limits.filter(({ id }) => members.has(id)).map(({ margin }) => margin);
     return { ...shown, effectK: margins.length > 0 ? Math.min(...margins) - line.margin : 0 };

@@ -2,6 +2,7 @@ import type { Estimate } from '../../../shared/schemas/estimate.js';
 import type { SolveAnswer } from '../../../shared/schemas/network-answers.js';
 import type { NetworkDocument } from '../../../shared/schemas/network.js';
 import type { NodeInfo } from '../assembly/builder.js';
+import { exchanges } from './exchanges.js';
 
 type HeatPath = Estimate['paths'][number];
 
@@ -11,11 +12,10 @@ function mainOutflows(document: NetworkDocument, answer: SolveAnswer): Map<strin
   const offer = (from: string, to: string, flowW: number) => {
     if (flowW > (best.get(from)?.flowW ?? 0)) best.set(from, { to, flowW });
   };
-  document.links.forEach((link, i) => {
-    const flow = answer.flowsW[link.id ?? `link-${String(i + 1)}`] ?? 0;
-    offer(link.from, link.to, flow);
-    offer(link.to, link.from, -flow);
-  });
+  for (const { from, to, flowW } of exchanges(document, answer)) {
+    offer(from, to, flowW);
+    offer(to, from, -flowW);
+  }
   return best;
 }
 

@@ -3,7 +3,8 @@ import type { CeilingAnswer, SolveAnswer } from '../../../shared/schemas/network
 import type { RuleSet } from '../../../shared/schemas/rule-set.js';
 import { compileAssembly, type CompiledAssembly } from '../assembly/compile.js';
 import type { ResolvedAssembly, ResolvedScenario } from '../assembly/resolved.js';
-import { solveNetwork } from '../network/solve.js';
+import type { PreparedNetwork } from '../network/prepared.js';
+import { solveWith } from '../network/solve.js';
 import { engineVersion } from '../version.js';
 import { findCeiling } from './ceiling.js';
 import { bandsOf, guardedCeiling } from './guarded.js';
@@ -14,6 +15,8 @@ export interface ScenarioEstimate {
   scenario: ResolvedScenario;
   compiled: CompiledAssembly;
   answer: SolveAnswer;
+  /** As it was solved, for like networks to start from. */
+  network: PreparedNetwork;
   ceiling: CeilingAnswer;
   guarded: CeilingAnswer;
   lines: EstimateLimit[];
@@ -54,13 +57,13 @@ export function estimateScenario(
   rules: RuleSet,
 ): ScenarioEstimate {
   const compiled = compileAssembly(assembly, scenario, rules);
-  const answer = solveNetwork(compiled.network, { compare: true });
-  const ceiling = findCeiling(compiled.network, compiled.drive);
+  const { network, answer } = solveWith(compiled.network, { compare: true });
+  const ceiling = findCeiling(compiled.network, compiled.drive, { near: network });
   const bands = bandsOf(hasBand(assembly));
   const networks = bands.map((band) =>
     band === 'mid' ? compiled.network : compileAssembly(assembly, scenario, rules, { band }).network,
   );
-  const guarded = guardedCeiling(networks, compiled.limits, compiled.drive);
+  const guarded = guardedCeiling(networks, compiled.limits, compiled.drive, network);
   const drive = presentDrive(assembly);
   const lines = limitLines(compiled.limits, answer, ceiling, drive.value);
   const binding = bindingLine(lines);
@@ -82,5 +85,5 @@ export function estimateScenario(
     assumedCount: assembly.assumptions.length,
     engineVersion,
   };
-  return { scenario, compiled, answer, ceiling, guarded, lines, verdict };
+  return { scenario, compiled, answer, network, ceiling, guarded, lines, verdict };
 }

@@ -28,7 +28,7 @@ export interface LimitInfo {
 const leastResistance = 1e-4;
 
 /** Film that cells are sized by: natural convection and radiation together, common practice [W/(m² K)]. */
-const cellFilm = 12;
+export const cellFilm = 12;
 
 /** Collects nodes, links and limits with what a reader needs to know of them. */
 export class NetworkBuilder {

@@ -1,7 +1,8 @@
 import { faceNames, type FaceName } from '../../../shared/schemas/assembly.js';
 import { printedWallConductivity, type WallBand } from '../conduction/printed-wall.js';
 import { lookUp } from '../tables.js';
-import type { NetworkBuilder } from './builder.js';
+import { finestCell } from '../grid/mesh.js';
+import { cellFilm, type NetworkBuilder } from './builder.js';
 import { edgeTowards, edges, faceSize, innerSize } from './geometry.js';
 import { meetRoom } from './outside.js';
 import { normalOf, slopeExtents, tiltOf } from './pose.js';
@@ -140,6 +141,11 @@ function compileWall(builder: NetworkBuilder, box: BoxModel, name: FaceName): vo
         heatCapacityJPerM3K: perVolume,
       },
     ],
+    // The same cells for every end of the printed-wall band.
+    finestCellM: finestCell({
+      layers: [{ thicknessM: face.wallM, inPlaneWPerMK: wallConductivity(face, 'mid').inPlane, throughWPerMK: 1 }],
+      filmForCellsWPerM2K: cellFilm,
+    }),
     nearWithinM: [inside.xM, inside.yM, inside.xM + inside.sizeM[0], inside.yM + inside.sizeM[1]],
     free: { near: inner, far: outer },
   });

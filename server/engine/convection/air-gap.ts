@@ -1,7 +1,7 @@
 import type { Nusselt } from './correlation.js';
 
-/** Sharpness of the blend of ElSherbiny’s three laws: at most 3 % where they meet, under 0.1 % elsewhere. */
-const sharpness = 40;
+/** Sharpness of the blend of ElSherbiny’s three laws: at most 1 % where they meet, under 0.3 % elsewhere. */
+const sharpness = 128;
 /** Half width over which the corners of [x]⁺ are rounded. */
 const corner = 0.1;
 
@@ -15,7 +15,7 @@ function wholePower(x: number, n: number): number {
  * Natural convection across a vertical gap between plates of unlike temperature.
  *
  * Nu = greatest of 0.0605 Ra^⅓, {1 + [0.104 Ra^0.293/(1 + (6310/Ra)^1.36)]³}^⅓ and 0.242 (Ra/A)^0.272, A = height/gap; blended by
- * (Σ Nu^40)^(1/40). Ra on the gap.
+ * (Σ Nu^128)^(1/128). Ra on the gap.
  *
  * @param ratio A = height/gap
  *

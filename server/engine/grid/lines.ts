@@ -5,6 +5,8 @@ export interface Stretch {
   cell: number;
   /** True for a source: its middle is to be a cell’s middle, so that its hottest point is computed and not missed. */
   source: boolean;
+  /** Lines of what lies there: within it lines are taken from these, so that no cell of it lies on two. */
+  lines?: Float64Array;
 }
 
 /** Ratio of neighbouring cells as they grow away from what asked for small ones. */
@@ -15,11 +17,13 @@ const same = 1e-7;
 const acrossSource = 5;
 
 function sizesBetween(length: number, first: number, last: number, largest: number, odd: boolean): number[] {
-  const left = [Math.min(first, length)];
+  // No end is coarser than the growth from the other end allows.
+  const reach = (growth - 1) * length;
+  let a = Math.min(first, last + reach, largest, length);
+  let b = Math.min(last, first + reach, largest) / growth;
+  const left = [a];
   const right: number[] = [];
-  let sum = left[0] as number;
-  let a = first;
-  let b = last / growth;
+  let sum = a;
   while (sum < length * (1 - 1e-9)) {
     const nextA = Math.min(a * growth, largest);
     const nextB = Math.min(b * growth, largest);
@@ -44,6 +48,14 @@ function sizesBetween(length: number, first: number, last: number, largest: numb
   }
   const total = sizes.reduce((all, size) => all + size, 0);
   return sizes.map((size) => (size * length) / total);
+}
+
+/** Of the given lines those nearest to the wanted ones, rising, none twice. */
+function takenFrom(given: readonly number[], wanted: readonly number[]): number[] {
+  const nearest = wanted.map((x) =>
+    given.reduce((best, line) => (Math.abs(line - x) < Math.abs(best - x) ? line : best)),
+  );
+  return [...new Set(nearest)].sort((p, q) => p - q);
 }
 
 /**
@@ -93,11 +105,16 @@ export function gridLines(
       inside.length > 0,
     );
     let x = a.at;
-    sizes.forEach((size, i) => {
-      for (let r = 1; r <= refine; r++)
-        lines.push(i === sizes.length - 1 && r === refine ? b.at : x + (size * r) / refine);
-      x += size;
-    });
+    const inner = sizes.slice(0, -1).map((size) => (x += size));
+    const given = stretches
+      .filter(({ from, to }) => from < middle && middle < to)
+      .flatMap((stretch) => Array.from(stretch.lines ?? []))
+      .filter((line) => line > a.at + same * length && line < b.at - same * length);
+    const between = given.length > 0 ? takenFrom(given, inner) : inner;
+    for (const line of [...between, b.at]) {
+      const from = lines.at(-1) as number;
+      for (let r = 1; r <= refine; r++) lines.push(r === refine ? line : from + ((line - from) * r) / refine);
+    }
   }
   return Float64Array.from(lines);
 }

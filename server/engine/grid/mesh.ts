@@ -6,6 +6,8 @@ import { gridLines, type Stretch } from './lines.js';
 const decayShare = 1 / 3;
 /** Cells across the shortest side of a source. */
 const cellsAcross = 5;
+/** Cell at an edge over which heat passes, in cells beside a source: what passes there is little and smooth. */
+const edgeCells = 4;
 /** How much of a cell a rectangle must cover to count as covering it. */
 const covers = 0.5;
 
@@ -18,11 +20,24 @@ export interface Rectangle {
 /** A rectangle that another grid covers on this one, and the cell size that the other asks for at its edges. */
 export interface Footprint extends Rectangle {
   cell?: number;
+  /** The other grid’s lines along both axes, from its own corner. */
+  lines?: readonly [Float64Array, Float64Array];
 }
 
 /** Where a join’s other grid lies on this one. */
 export function joinFootprint(join: NetworkGrid['joins'][number], other: NetworkGrid): Rectangle {
   return { xM: join.xM, yM: join.yM, sizeM: other.sizeM };
+}
+
+/** Cell size that a grid needs beside what heats or cools it [m]: a share of √(k t/h). */
+export function finestCell({
+  layers,
+  filmForCellsWPerM2K,
+  finestCellM,
+}: Pick<NetworkGrid, 'layers' | 'filmForCellsWPerM2K' | 'finestCellM'>): number {
+  if (finestCellM !== undefined) return finestCellM;
+  const sheet = layers.reduce((sum, { thicknessM, inPlaneWPerMK }) => sum + thicknessM * inPlaneWPerMK, 0);
+  return decayShare * Math.sqrt(sheet / filmForCellsWPerM2K);
 }
 
 /**
@@ -55,26 +70,22 @@ export class Mesh {
     const planes = choosePlanes(grid.layers, shortest);
     this.nz = planes.count;
     const own = planeConductances(planes, grid.layers);
-    const decay = decayShare * Math.sqrt(own.sheet.reduce((sum, value) => sum + value, 0) / grid.filmForCellsWPerM2K);
+    const decay = finestCell(grid);
     const stretches = (axis: 0 | 1): Stretch[] => [
       ...sources.map((patch) => ({
         ...along(patch, axis),
         cell: Math.min(decay, Math.min(...patch.sizeM) / cellsAcross),
         source: true,
       })),
-      ...footprints.map((foot) => ({
-        ...along(foot, axis),
-        cell: Math.min(decay, foot.cell ?? Infinity),
-        source: false,
-      })),
+      ...footprints.map((foot) => {
+        const stretch = { ...along(foot, axis), cell: Math.min(decay, foot.cell ?? Infinity), source: false };
+        return foot.lines ? { ...stretch, lines: foot.lines[axis].map((line) => line + stretch.from) } : stretch;
+      }),
       ...grid.zones.map((zone) => ({ ...along(zone, axis), cell: decay, source: false })),
       ...grid.readings.flatMap(({ over }) => (over ? [{ ...along(over, axis), cell: Infinity, source: false }] : [])),
-      ...(grid.nearWithinM
-        ? [{ from: grid.nearWithinM[axis], to: grid.nearWithinM[axis + 2] as number, cell: Infinity, source: false }]
-        : []),
     ];
     const end = (edges: readonly GridEdge[]) =>
-      [...grid.edges, ...grid.edgeJoins].some(({ edge }) => edges.includes(edge)) ? 1.5 * decay : Infinity;
+      [...grid.edges, ...grid.edgeJoins].some(({ edge }) => edges.includes(edge)) ? edgeCells * decay : Infinity;
     this.xs = gridLines(lx, stretches(0), [end(['x0']), end(['x1'])], grid.refine);
     this.ys = gridLines(ly, stretches(1), [end(['y0']), end(['y1'])], grid.refine);
     this.nx = this.xs.length - 1;

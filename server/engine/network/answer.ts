@@ -75,8 +75,10 @@ export interface LimitReader {
   id: string;
   kind: LimitAnswer['kind'];
   node?: string;
-  /** Negative where the limit holds: in K for temperatures, else a share of the rating. Smooth in the drive. */
-  excess: () => number;
+  /** Writes what the limit is read from, smooth in the drive: its value at `at`, and at `at + 1` what it is held against. */
+  read: (out: Float64Array, at: number) => void;
+  /** Negative where the limit holds: in K for temperatures, else a share of the rating; from what `read` gives. */
+  excess: (value: number, against: number) => number;
   answer: () => LimitAnswer;
 }
 
@@ -89,7 +91,10 @@ export function limitReader(network: PreparedNetwork, limit: NetworkLimit): Limi
       id: limit.id,
       kind: 'temperature',
       node: limit.node,
-      excess: () => celsius() - limit.maxC,
+      read: (out, at) => {
+        out[at] = celsius();
+      },
+      excess: (value) => value - limit.maxC,
       answer: () => ({
         id: limit.id,
         kind: 'temperature',
@@ -109,7 +114,10 @@ export function limitReader(network: PreparedNetwork, limit: NetworkLimit): Limi
       id: limit.id,
       kind: 'current',
       ...('node' in limit ? { node: limit.node } : {}),
-      excess: () => current() / limit.maxA - 1,
+      read: (out, at) => {
+        out[at] = current();
+      },
+      excess: (value) => value / limit.maxA - 1,
       answer: () => ({
         id: limit.id,
         kind: 'current',
@@ -123,15 +131,20 @@ export function limitReader(network: PreparedNetwork, limit: NetworkLimit): Limi
   const node = index(limit.node);
   const { derating } = limit;
   const reference = derating ? network.reader(derating.referenceNode) : () => 0;
-  const allowed = () => (derating ? lookUp(derating.points, reference() - zeroCelsius) : 1);
+  const allowed = (celsius: number) => (derating ? lookUp(derating.points, celsius) : 1);
+  const celsius = () => reference() - zeroCelsius;
   const used = () => ratedPower(network, node) / limit.maxW;
   return {
     id: limit.id,
     kind: 'power',
     node: limit.node,
-    excess: () => used() - limit.maxShare * allowed(),
+    read: (out, at) => {
+      out[at] = used();
+      out[at + 1] = celsius();
+    },
+    excess: (value, against) => value - limit.maxShare * allowed(against),
     answer: () => {
-      const value = used() / Math.max(allowed(), leastShare);
+      const value = used() / Math.max(allowed(celsius()), leastShare);
       return {
         id: limit.id,
         kind: 'power',

@@ -1,5 +1,5 @@
 import type { NetworkGrid } from '../../../shared/schemas/network-grid.js';
-import { joinFootprint, Mesh, type Footprint, type Rectangle } from '../grid/mesh.js';
+import { finestCell, joinFootprint, Mesh, type Footprint, type Rectangle } from '../grid/mesh.js';
 
 /** A grid in its place in a network: its cells’ numbers begin at `base`. */
 export interface PlacedGrid {
@@ -14,27 +14,39 @@ export interface PlacedGrid {
 export function placeGrids(grids: readonly NetworkGrid[], firstCell: number): PlacedGrid[] {
   const byId = new Map(grids.map((grid) => [grid.id, grid]));
   // What lies on each grid, by side, and everything that asks for lines.
-  const covered = new Map<string, { side: 'near' | 'far'; foot: Footprint }[]>(grids.map(({ id }) => [id, []]));
+  const covered = new Map<string, { side: 'near' | 'far'; foot: Footprint; from?: string }[]>(
+    grids.map(({ id }) => [id, []]),
+  );
   for (const grid of grids) {
     for (const join of grid.joins) {
       const other = byId.get(join.grid);
       if (!other) continue;
-      covered.get(grid.id)?.push({ side: join.side, foot: joinFootprint(join, other) });
+      covered.get(grid.id)?.push({ side: join.side, foot: joinFootprint(join, other), from: other.id });
       covered.get(other.id)?.push({
         side: join.gridSide,
-        foot: { xM: -join.xM, yM: -join.yM, sizeM: grid.sizeM, cell: Infinity },
+        foot: { xM: -join.xM, yM: -join.yM, sizeM: grid.sizeM, cell: finestCell(grid) },
       });
     }
   }
+  // What lies on another comes first: the other takes over its lines.
+  const meshes = new Map<string, Mesh>();
+  const meshOf = (grid: NetworkGrid): Mesh => {
+    const known = meshes.get(grid.id);
+    if (known) return known;
+    const feet = (covered.get(grid.id) ?? []).map(({ foot, from }): Footprint => {
+      const other = from === undefined ? undefined : byId.get(from);
+      const mesh = other && meshOf(other);
+      return mesh ? { ...foot, lines: [mesh.xs, mesh.ys] } : foot;
+    });
+    const mesh = new Mesh(grid, feet);
+    meshes.set(grid.id, mesh);
+    return mesh;
+  };
   let base = firstCell;
   return grids.map((grid) => {
-    const feet = covered.get(grid.id) ?? [];
-    const mesh = new Mesh(
-      grid,
-      feet.map(({ foot }) => foot),
-    );
+    const mesh = meshOf(grid);
     const of = (side: 'near' | 'far'): Rectangle[] =>
-      feet.filter((entry) => entry.side === side).map(({ foot }) => foot);
+      (covered.get(grid.id) ?? []).filter((entry) => entry.side === side).map(({ foot }) => foot);
     const placed: PlacedGrid = {
       grid,
       mesh,

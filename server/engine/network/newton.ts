@@ -15,9 +15,9 @@ const stepTolerance = 1e-10;
 const residualTolerance = 1e-11;
 /** Rounding that a residual cannot go below, as a multiple of Σ|conductance| × temperature. */
 const rounding = 8 * Number.EPSILON;
-/** From this many unknowns on, a factorisation that still serves well is used again. */
-const worthReusing = 1500;
-const servesWell = 0.1;
+/** From this many unknowns on, a factorisation that still serves well is used again: while each step is this share of the last, or less. */
+const worthReusing = 200;
+const servesWell = 0.25;
 
 export interface SteadyState {
   iterations: number;
@@ -108,6 +108,7 @@ export function firstGuess(network: PreparedNetwork): void {
   for (let i = 0; i < unknownCount; i++) temperatures[i] = mean;
   if (unknownCount === 0) return;
   network.linearise(mean + 20);
+  network.factored = false;
   network.matrix.factor();
   const { step } = workspaceOf(network);
   solveForStep(network, step);
@@ -117,6 +118,18 @@ export function firstGuess(network: PreparedNetwork): void {
     temperatures[i] = guess + stagger * (1 + (i % 7));
   }
   network.project();
+}
+
+/** Starts a network from the state and the factors of a like one; from a first guess where there is none. */
+export function startFrom(network: PreparedNetwork, near: PreparedNetwork | undefined): void {
+  if (near?.size !== network.size || near.rows !== network.rows) {
+    firstGuess(network);
+    return;
+  }
+  const { temperatures, unknownCount } = network;
+  for (let i = 0; i < unknownCount; i++) temperatures[i] = near.temperatures[i] as number;
+  network.project();
+  network.factored = near.factored && network.matrix.adopt(near.matrix);
 }
 
 /** Σ (residual / stiffness)²: how far the nodes are from rest in kelvins, so that a stiff node’s rounding does not hide a soft one. */
@@ -165,6 +178,7 @@ function newton(network: PreparedNetwork, { base, step, weight, last }: Workspac
   if (done && network.isLinear) return 1;
   let lastLargest = Infinity;
   let ratio = 1;
+  let lastReused = false;
   for (let iteration = 1; iteration <= mostIterations; iteration++) {
     for (let i = 0; i < unknownCount; i++) {
       const s = stiffness[i] as number;
@@ -172,8 +186,16 @@ function newton(network: PreparedNetwork, { base, step, weight, last }: Workspac
     }
     const before = mismatch(network, weight);
     base.set(network.temperatures);
-    const reuse = unknownCount >= worthReusing && ratio < servesWell && iteration > 1;
-    if (!reuse) network.matrix.factor();
+    // One from a neighbouring state is given a first step, to be judged by the second.
+    const reuse: boolean =
+      network.factored &&
+      unknownCount >= worthReusing &&
+      (iteration === 1 || ratio < servesWell || (iteration === 2 && lastReused));
+    if (!reuse) {
+      network.matrix.factor();
+      network.factored = true;
+    }
+    lastReused = reuse;
     solveForStep(network, step);
     const largest = largestOf(step, unknownCount);
     if (!Number.isFinite(before) || !Number.isFinite(largest)) return -1;
@@ -197,6 +219,7 @@ function newton(network: PreparedNetwork, { base, step, weight, last }: Workspac
       // No step makes it better, and the step says that the answer lies within the tolerance: rounding is all that is left.
       if (largest <= stepTolerance) return iteration;
       if (!reuse) return -1;
+      network.factored = false;
       ratio = 1;
       continue;
     }
@@ -224,6 +247,7 @@ function transient(network: PreparedNetwork, { base, step }: Workspace): number 
     base.set(network.temperatures);
     const { diagonal } = network.matrix;
     for (let i = 0; i < unknownCount; i++) diagonal[i] = (diagonal[i] as number) + pace;
+    network.factored = false;
     network.matrix.factor();
     solveForStep(network, step);
     const largest = largestOf(step, unknownCount);
@@ -244,6 +268,22 @@ function transient(network: PreparedNetwork, { base, step }: Workspace): number 
     pace *= Math.min(Math.max(after / before, 0.1), 1.5) * 0.7;
   }
   return -1;
+}
+
+/**
+ * How the solved state answers to a change of the drive: J dT = −∂residual/∂drive, with the matrix as last factored.
+ *
+ * @param change makes the change; the caller undoes it
+ * @param by size of the change
+ * @param step dT per unit of change, on return [K]
+ */
+export function tangent(network: PreparedNetwork, change: () => void, by: number, step: Float64Array): void {
+  const { residual, unknownCount, rows } = network;
+  change();
+  network.evaluate();
+  for (let i = 0; i < unknownCount; i++) step[i] = -(residual[i] as number) / by;
+  for (let i = unknownCount; i < rows; i++) step[i] = 0;
+  network.matrix.solve(step);
 }
 
 /** Sets one array of each shared supply a little warmer, so that an unstable equal share is left. */

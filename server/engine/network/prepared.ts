@@ -57,6 +57,8 @@ export class PreparedNetwork implements System {
   readonly grids: readonly PlacedGrid[];
   /** Negative pivots of a stable network: one per patch. */
   readonly expectedNegativePivots: number;
+  /** True while the matrix’s factors are those of a state that this network was in: a neighbouring state may use them again. */
+  factored = false;
   /** True where no law bends and no device answers to temperature. */
   readonly isLinear: boolean;
 

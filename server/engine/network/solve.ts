@@ -4,7 +4,7 @@ import { channelCorrelations } from '../convection/channel.js';
 import { secondCorrelation, type ConvectionShape } from '../convection/registry.js';
 import { EngineError } from '../errors.js';
 import { networkAnswer, temperaturesC } from './answer.js';
-import { firstGuess, solveSteady } from './newton.js';
+import { firstGuess, solveSteady, startFrom } from './newton.js';
 import { PreparedNetwork } from './prepared.js';
 
 /** The same network by the second correlation of each shape. */
@@ -62,16 +62,20 @@ function highestShare(network: PreparedNetwork): number {
   return holds;
 }
 
-/**
- * The steady state of a network document.
- *
- * @param options `compare`: the whole solution once more with each shape’s second correlation
- * @returns temperatures [°C], flows [W], film coefficients [W/(m² K)], devices, limits, heat balance and warnings
- * @throws EngineError naming the node or link: invalid document, no path to a fixed temperature, runaway, not converged
- */
-export function solveNetwork(document: NetworkDocument, options: { compare?: boolean } = {}): SolveAnswer {
+interface SolveOptions {
+  /** The whole solution once more with each shape’s second correlation. */
+  compare?: boolean;
+  /** A like network to start from, as it was solved. */
+  near?: PreparedNetwork | undefined;
+}
+
+/** Solves, and hands over the solved network beside its answer. */
+export function solveWith(
+  document: NetworkDocument,
+  options: SolveOptions = {},
+): { network: PreparedNetwork; answer: SolveAnswer } {
   const network = new PreparedNetwork(document);
-  firstGuess(network);
+  startFrom(network, options.near);
   let answer: SolveAnswer;
   try {
     answer = networkAnswer(network, solveSteady(network));
@@ -79,11 +83,22 @@ export function solveNetwork(document: NetworkDocument, options: { compare?: boo
     if (error instanceof EngineError && error.code === 'runaway') throw withHighestDrive(error, network);
     throw error;
   }
-  if (!options.compare) return answer;
+  if (!options.compare) return { network, answer };
   const second = new PreparedNetwork(withSecondCorrelations(document));
-  second.temperatures.set(network.temperatures);
+  startFrom(second, network);
   solveSteady(second);
-  return { ...answer, compared: { temperaturesC: temperaturesC(second) } };
+  return { network, answer: { ...answer, compared: { temperaturesC: temperaturesC(second) } } };
+}
+
+/**
+ * The steady state of a network document.
+ *
+ * @param options `compare`: the whole solution once more with each shape’s second correlation
+ * @returns temperatures [°C], flows [W], film coefficients [W/(m² K)], devices, limits, heat balance and warnings
+ * @throws EngineError naming the node or link: invalid document, no path to a fixed temperature, runaway, not converged
+ */
+export function solveNetwork(document: NetworkDocument, options: SolveOptions = {}): SolveAnswer {
+  return solveWith(document, options).answer;
 }
 
 function withHighestDrive(error: EngineError, network: PreparedNetwork): EngineError {

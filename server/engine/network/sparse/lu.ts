@@ -46,6 +46,16 @@ export class SparseLu {
     this.work = new Float64Array(n);
   }
 
+  /** Takes over the factors of a like matrix; false where its structure is another. */
+  adopt(other: SparseLu): boolean {
+    if (other.plan !== this.plan) return false;
+    this.uValue.set(other.uValue);
+    this.lValue.set(other.lValue);
+    this.pivot.set(other.pivot);
+    this.negativePivots = other.negativePivots;
+    return true;
+  }
+
   /** A slot that is never read, for entries of rows or columns that are not in the matrix. */
   get noSlot(): number {
     return this.plan.entries;
