@@ -1,2 +1,2 @@
 /** Changes whenever a computed number can change: estimates are cached and decisions dated by it. */
-export const engineVersion = '0.1.0';
+export const engineVersion = '0.2.0';

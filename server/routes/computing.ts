@@ -1,14 +1,24 @@
 import { z } from 'zod';
 import { assemblyDocumentSchema } from '../../shared/schemas/assembly.js';
 import { compileAnswerSchema, estimateRequestSchema, estimateSchema } from '../../shared/schemas/estimate.js';
+import { correlationListSchema } from '../../shared/schemas/correlation.js';
 import { networkDocumentSchema } from '../../shared/schemas/network.js';
 import { ceilingAnswerSchema, ceilingRequestSchema, solveAnswerSchema } from '../../shared/schemas/network-answers.js';
-import { compileDocument, estimateDocument, networkCeiling } from '../services/computing.js';
+import { compileDocument, estimateDocument, listCorrelations, networkCeiling } from '../services/computing.js';
 import { defineRoute } from './define.js';
 
 const tag = 'Computing';
 
 export const computingRoutes = [
+  defineRoute({
+    method: 'get',
+    path: '/correlations',
+    tag,
+    summary: 'Every published correlation that the engine computes with: formula, range, source',
+    access: 'read',
+    answers: { status: 200, schema: correlationListSchema },
+    handle: () => Promise.resolve(listCorrelations()),
+  }),
   defineRoute({
     method: 'post',
     path: '/networks/solve',

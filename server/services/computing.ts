@@ -1,3 +1,5 @@
+import type { CorrelationList } from '../../shared/schemas/correlation.js';
+import { correlationEntries } from '../engine/convection/registry.js';
 import type { AssemblyDocument } from '../../shared/schemas/assembly.js';
 import type { Estimate, EstimateRequest } from '../../shared/schemas/estimate.js';
 import type { CeilingAnswer, CeilingRequest } from '../../shared/schemas/network-answers.js';
@@ -51,4 +53,10 @@ export async function networkCeiling(context: AppContext, request: CeilingReques
     }
     throw error;
   }
+}
+
+/** The engine’s registry of correlations. */
+export function listCorrelations(): CorrelationList {
+  const items = correlationEntries();
+  return { items, total: items.length };
 }

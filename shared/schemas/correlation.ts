@@ -14,3 +14,4 @@ export const correlationEntrySchema = z
 export type CorrelationEntry = z.infer<typeof correlationEntrySchema>;
 
 export const correlationListSchema = z.object({ items: z.array(correlationEntrySchema), total: z.number().int() });
+export type CorrelationList = z.infer<typeof correlationListSchema>;

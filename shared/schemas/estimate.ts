@@ -107,6 +107,8 @@ export const estimateSchema = z
       }),
     ),
     flowsW: z.record(z.string(), z.number()),
+    /** Heat between named places, grids taken whole: from where, to where, by which link. */
+    exchanges: z.array(z.object({ from: z.string(), to: z.string(), flowW: z.number(), link: z.string() })),
     devices: z.record(z.string(), deviceAnswerSchema),
     limits: z.array(estimateLimitSchema),
     stressRatios: z.array(

@@ -142,7 +142,7 @@ export const rules: RuleSet = {
   ),
 };
 
-type WallInput = AssemblyDocumentInput['housing']['faces']['top'];
+type WallInput = NonNullable<AssemblyDocumentInput['housing']>['faces']['top'];
 
 export const printedWall: WallInput = {
   wallM: 0.0024,
@@ -168,15 +168,23 @@ export const metalWall: WallInput = {
   finishInside: { inline: matt },
 };
 
-export function sixWalls(wall: WallInput): AssemblyDocumentInput['housing']['faces'] {
-  return Object.fromEntries(faceNames.map((name) => [name, wall])) as AssemblyDocumentInput['housing']['faces'];
+export type HousingInput = NonNullable<AssemblyDocumentInput['housing']>;
+
+export function sixWalls(wall: WallInput): HousingInput['faces'] {
+  return Object.fromEntries(faceNames.map((name) => [name, wall])) as HousingInput['faces'];
 }
+
+export const lampHousing: HousingInput = {
+  outerM: [0.16, 0.09, 0.045],
+  touched: '10 s',
+  faces: sixWalls(printedWall),
+};
 
 /** A lamp: two arrays on an aluminium plate under the lid of a printed box. */
 export const lampInput: AssemblyDocumentInput = {
   format: 'trimwick-assembly/1',
   name: 'Test lamp',
-  housing: { outerM: [0.16, 0.09, 0.045], touched: '10 s', faces: sixWalls(printedWall) },
+  housing: lampHousing,
   carriers: [
     {
       id: 'plate',
@@ -188,10 +196,15 @@ export const lampInput: AssemblyDocumentInput = {
       on: { face: 'top', stack: [{ material: { inline: paste }, thicknessM: 0.0002 }] },
     },
   ],
-  parts: ['left', 'right'].map((id) => ({
+  parts: ['left', 'right'].map((id, i) => ({
     id,
     type: { inline: array },
-    mount: { on: 'plate', stack: [{ material: { inline: paste }, thicknessM: 0.0001 }] },
+    mount: {
+      on: 'plate',
+      xM: 0.03 + 0.06 * i,
+      yM: 0.035,
+      stack: [{ material: { inline: paste }, thicknessM: 0.0001 }],
+    },
     supply: 'drive',
     lightKeptShare: 0.1,
   })),

@@ -8,7 +8,7 @@ import { heater, metalWall, sixWalls } from './fixtures.js';
 const rules = bySlug(readRuleSets(), 'plain-workshop');
 const aluminium = { inline: bySlug(readMaterials(), 'aluminium-6060') };
 
-type WallInput = AssemblyDocumentInput['housing']['faces']['top'];
+type WallInput = NonNullable<AssemblyDocumentInput['housing']>['faces']['top'];
 
 function boxWith(type: PartType, wall: WallInput = metalWall) {
   const fed = type.electrical.kind !== 'heat';

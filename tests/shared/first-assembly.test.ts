@@ -37,10 +37,10 @@ describe('the first assembly', () => {
     const { document, stoodIn } = firstAssembly(emptyAnswers(), catalogue);
     expect(assemblyDocumentSchema.safeParse(document).error?.issues ?? []).toEqual([]);
     expect(stoodIn.map(({ question }) => question)).toEqual(['size', 'mounted', 'mounted', 'sun']);
-    expect(document.housing.faces.top).toMatchObject({ wallM: null, material: null, loadState: null });
+    expect(document.housing?.faces.top).toMatchObject({ wallM: null, material: null, loadState: null });
     expect(document.parts[0]?.heatW).toBeNull();
     expect(document.scenarios[0]?.airC).toBeNull();
-    expect(document.housing.touched).toBeNull();
+    expect(document.housing?.touched).toBeNull();
   });
 
   test('is valid without any reference values', () => {

@@ -9,6 +9,7 @@ import type { ResolvedAssembly } from '../assembly/resolved.js';
 import { EngineError } from '../errors.js';
 import { solveNetwork } from '../network/solve.js';
 import { engineVersion } from '../version.js';
+import { exchanges } from './exchanges.js';
 import { handCheck } from './hand-check.js';
 import { heatPaths } from './heat-paths.js';
 import { estimateScenario, type ScenarioEstimate } from './scenario-estimate.js';
@@ -117,6 +118,7 @@ export function estimateAssembly(
       };
     }),
     flowsW: answer.flowsW,
+    exchanges: exchanges(compiled.network, answer),
     devices: answer.devices,
     limits: chosen.lines,
     stressRatios: stressRatios(chosen, answer.devices),

@@ -14,15 +14,12 @@ export interface Exchange {
 function places(grid: NetworkGrid) {
   const readings = new Set(grid.readings.map(({ id }) => id));
   const mean = `${grid.id}.mean`;
-  // A wall is followed from the spot where heat enters to the mean of its outside; a carrier by its mean alone.
+  // A wall is followed from the mean under what lies on it to the mean of its outside; a carrier by its mean alone.
   if (readings.has(mean)) return { entry: () => mean, near: mean, far: mean };
   const inner = grid.free.near ?? grid.id;
   const outer = grid.free.far ?? grid.id;
-  return {
-    entry: (what: string) => (readings.has(`${grid.id}.peak.${what}`) ? `${grid.id}.peak.${what}` : inner),
-    near: inner,
-    far: outer,
-  };
+  const under = (what: string) => `${grid.id}.mean.${what}`;
+  return { entry: (what: string) => (readings.has(under(what)) ? under(what) : outer), near: inner, far: outer };
 }
 
 /** Last part of an id: the part or carrier that it speaks of. */
@@ -55,9 +52,7 @@ export function exchanges(document: NetworkDocument, answer: SolveAnswer): Excha
     const enter = (from: string, what: string, flowW: number, link: string) => {
       const entry = own.entry(what);
       found.push({ from, to: entry, flowW, link });
-      if (entry !== own.near && own.far !== own.near) {
-        found.push({ from: entry, to: own.far, flowW, link: `${grid.id}.through` });
-      }
+      if (entry !== own.far) found.push({ from: entry, to: own.far, flowW, link: `${grid.id}.through` });
     };
     for (const { node } of grid.patches) enter(node, lastOf(node), inflow(document, answer, node), `${node}.spread`);
     for (const surface of grid.surfaces) {

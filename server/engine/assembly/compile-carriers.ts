@@ -121,11 +121,18 @@ function joinToFace(builder: NetworkBuilder, carrier: ResolvedCarrier): void {
     emissivity: 0,
   });
   if (outside) return;
+  const under = `${faceLabel(face)}, inside, under ${label.charAt(0).toLowerCase()}${label.slice(1)}`;
+  builder.reading(
+    gridOfFace(face),
+    { id: `face.${face}.mean.${carrier.id}`, side: 'near', what: 'mean', over },
+    'spot',
+    `${under}, mean`,
+  );
   builder.reading(
     gridOfFace(face),
     { id: `face.${face}.peak.${carrier.id}`, side: 'near', what: 'peak', over },
     'spot',
-    `${faceLabel(face)}, inside, under ${label.charAt(0).toLowerCase()}${label.slice(1)}`,
+    `${under}, hottest`,
   );
 }
 

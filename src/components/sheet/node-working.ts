@@ -35,6 +35,10 @@ const shapes = {
   'vertical-plate': 'upright plate',
   'plate-facing-up': 'plate facing up',
   'plate-facing-down': 'plate facing down',
+  'inclined-plate': 'inclined plate',
+  'horizontal-cylinder': 'horizontal cylinder',
+  'vertical-cylinder': 'vertical cylinder',
+  sphere: 'sphere',
 } as const;
 
 /** Meant thinner than this, a flow is a reading aid of the network and no path of heat [W]. */
@@ -77,7 +81,7 @@ function describe(link: NetworkLink, flowW: number, rise: number): Pick<WorkingR
     case 'convection': {
       const h = Math.abs(rise) > 1e-6 && link.areaM2 > 0 ? Math.abs(flowW / (rise * link.areaM2)) : null;
       return {
-        law: `Natural convection, ${shapes[link.shape]}`,
+        law: `${link.airSpeedMPerS ? 'Forced and natural' : 'Natural'} convection, ${shapes[link.shape]}`,
         formula: 'q = h A ΔT, h = Nu k / L',
         inputs: [
           dT,
@@ -104,6 +108,34 @@ function describe(link: NetworkLink, flowW: number, rise: number): Pick<WorkingR
         inputs,
       };
     }
+    case 'ventilation':
+      return {
+        law: link.fanCurve || link.flowM3PerS !== undefined ? 'Air moved by a fan' : 'Air exchange by buoyancy',
+        formula: link.heightM === undefined ? 'q = ρ c_p V̇ ΔT' : 'q = ρ c_p V̇ ΔT, V̇ = C_d A √(2 g H ΔT / T)',
+        inputs: [dT, ...(link.heightM === undefined ? [] : [{ name: 'H', value: `${figures(link.heightM)} m` }])],
+      };
+    case 'air-gap':
+      return {
+        law: 'Closed air gap',
+        formula: 'q = Nu k A ΔT / gap',
+        inputs: [
+          dT,
+          { name: 'A', value: `${figures(link.areaM2)} m²` },
+          { name: 'gap', value: `${figures(link.gapM * 1000)} mm` },
+        ],
+      };
+    case 'fin-array':
+      return {
+        law: 'Fins',
+        formula: 'q = h (η A_fins + A_strips) ΔT',
+        inputs: [dT, { name: 'fins', value: String(link.finCount) }],
+      };
+    case 'channel':
+      return {
+        law: 'Channel between plates',
+        formula: 'q = Nu k A ΔT / s',
+        inputs: [dT, { name: 's', value: `${figures(link.spacingM * 1000)} mm` }],
+      };
   }
 }
 
@@ -130,6 +162,90 @@ function sourcesOf(estimate: Estimate, node: string): NodeWorking['sources'] {
     if (share * lightW > 0) sources.push({ words: `Light absorbed, of ${other.id}`, heatW: share * lightW });
   }
   return sources;
+}
+
+/** What carries heat between the named places of a plate, board or wall, whose cells are many. */
+function describeGrid(estimate: Estimate, link: string): Pick<WorkingRow, 'law' | 'formula' | 'inputs'> {
+  const { grids } = estimate.network;
+  const surface = grids.flatMap(({ surfaces }) => surfaces).find(({ id }) => id === link);
+  if (surface) {
+    switch (surface.kind) {
+      case 'convection':
+        return {
+          law: `Convection of its bare side, ${shapes[surface.shape as keyof typeof shapes]}, cell by cell`,
+          formula: 'q = Σ h A ΔT, h = Nu k / L at the mean excess',
+          inputs: [
+            { name: 'L', value: `${figures(surface.lengthM * 1000)} mm` },
+            { name: 'correlation', value: surface.correlation ?? 'raithby-hollands' },
+          ],
+        };
+      case 'radiation':
+        return {
+          law: 'Radiation of its bare side, cell by cell',
+          formula: 'q = Σ ε σ A (T₁⁴ − T₂⁴)',
+          inputs: [{ name: 'ε A / A', value: figures(surface.emissivity * surface.areaFactor) }],
+        };
+      case 'film':
+        return {
+          law: 'Conduction from its side, cell by cell',
+          formula: 'q = Σ h A ΔT',
+          inputs: [{ name: 'h', value: `${figures(surface.coefficientWPerM2K)} W/(m² K)` }],
+        };
+      case 'air-gap':
+        return {
+          law: 'Closed air gap, cell by cell',
+          formula: 'q = Σ Nu k A ΔT / gap',
+          inputs: [{ name: 'gap', value: `${figures(surface.gapM * 1000)} mm` }],
+        };
+      case 'fin-array':
+        return {
+          law: 'Fins',
+          formula: 'q = h (η A_fins + A_strips) ΔT',
+          inputs: [{ name: 'fins', value: String(surface.finCount) }],
+        };
+    }
+  }
+  const join = grids.flatMap(({ joins }) => joins).find(({ id }) => id === link);
+  if (join) {
+    return {
+      law: 'Joint, cell to cell',
+      formula: 'q = Σ A ΔT / r',
+      inputs: [{ name: 'r', value: `${figures(join.resistanceKM2PerW)} K m²/W` }],
+    };
+  }
+  return link.endsWith('.spread')
+    ? {
+        law: 'Spreads into what it stands on',
+        formula: 'evenly over its contact; conduction from cell to cell',
+        inputs: [],
+      }
+    : { law: 'Conduction through the wall', formula: 'from cell to cell', inputs: [] };
+}
+
+/** Rows of the exchanges that no link of the document carries alone. */
+function gridRows(
+  estimate: Estimate,
+  node: string,
+  byId: ReadonlyMap<string, Estimate['nodes'][number]>,
+): WorkingRow[] {
+  const ofLinks = new Set(estimate.network.links.map((link, i) => link.id ?? `link-${String(i + 1)}`));
+  return estimate.exchanges.flatMap((exchange): WorkingRow[] => {
+    if (ofLinks.has(exchange.link) || (exchange.from !== node && exchange.to !== node)) return [];
+    const outW = exchange.from === node ? exchange.flowW : -exchange.flowW;
+    if (Math.abs(outW) < leastFlowW) return [];
+    const otherNode = exchange.from === node ? exchange.to : exchange.from;
+    const other = byId.get(otherNode);
+    return [
+      {
+        id: `${exchange.link} ${otherNode}`,
+        other: other?.label ?? otherNode,
+        otherNode,
+        otherC: other?.temperatureC ?? NaN,
+        outW,
+        ...describeGrid(estimate, exchange.link),
+      },
+    ];
+  });
 }
 
 /** The working of a node’s temperature; `null` when the estimate has no such node. */
@@ -166,6 +282,7 @@ export function nodeWorking(estimate: Estimate, node: string): NodeWorking | nul
       },
     ];
   });
+  rows.push(...gridRows(estimate, node, byId));
   rows.sort((a, b) => Math.abs(b.outW) - Math.abs(a.outW));
   const sources = sourcesOf(estimate, node);
   const inW =

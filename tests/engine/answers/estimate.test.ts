@@ -6,7 +6,17 @@ import { estimateAssembly } from '../../../server/engine/answers/estimate.js';
 import { withAskedMargins } from '../../../server/engine/answers/guarded.js';
 import { stateOf } from '../../../server/engine/answers/limit-lines.js';
 import { solveNetwork } from '../../../server/engine/network/solve.js';
-import { heatedMetalBox, lamp, lampInput, matt, printedWall, rules, sixWalls, white } from '../fixtures.js';
+import {
+  heatedMetalBox,
+  lamp,
+  lampHousing,
+  lampInput,
+  matt,
+  printedWall,
+  rules,
+  sixWalls,
+  white,
+} from '../fixtures.js';
 
 const temperature = (estimate: Estimate, id: string): number => {
   const node = estimate.nodes.find((candidate) => candidate.id === id);
@@ -111,7 +121,7 @@ describe('What moves an estimate, in the right sense', () => {
     const hottest = (finish: typeof matt, sun: boolean) => {
       const walls = sixWalls({ ...printedWall, finishOutside: { inline: finish } });
       const scenario = { id: 'sill', name: 'Sill', airC: 25, sun: sun ? { irradianceWPerM2: 800 } : null };
-      const document = lamp({ housing: { ...lampInput.housing, faces: walls }, scenarios: [scenario] });
+      const document = lamp({ housing: { ...lampHousing, faces: walls }, scenarios: [scenario] });
       return temperature(estimateAssembly(document, rules), 'face.top.outer');
     };
     expect(hottest(matt, false)).toBe(hottest(white, false));
@@ -122,13 +132,13 @@ describe('What moves an estimate, in the right sense', () => {
     const against = sixWalls(printedWall);
     against.bottom = { ...printedWall, exposure: { kind: 'against-wall' } };
     const open = estimateAssembly(lamp(), rules);
-    const held = estimateAssembly(lamp({ housing: { ...lampInput.housing, faces: against } }), rules);
+    const held = estimateAssembly(lamp({ housing: { ...lampHousing, faces: against } }), rules);
     expect(temperature(held, 'face.top.outer')).toBeGreaterThan(temperature(open, 'face.top.outer'));
   });
 
   it('upside down the lid loses less by convection: it looks down', () => {
     const film = (up: 'top' | 'bottom') => {
-      const { network } = estimateAssembly(lamp({ housing: { ...lampInput.housing, pose: { up } } }), rules);
+      const { network } = estimateAssembly(lamp({ housing: { ...lampHousing, pose: { up } } }), rules);
       return solveNetwork(network).filmCoefficientsWPerM2K['face.top.outside.convection'] ?? NaN;
     };
     expect(film('bottom')).toBeLessThan(0.8 * film('top'));
@@ -159,7 +169,7 @@ describe('What is not known', () => {
   it('is listed with what the typical value would gain', () => {
     const walls = sixWalls({ ...printedWall, loadState: null });
     const { assumed, verdict } = estimateAssembly(
-      lamp({ housing: { ...lampInput.housing, touched: null, faces: walls } }),
+      lamp({ housing: { ...lampHousing, touched: null, faces: walls } }),
       rules,
     );
     expect(verdict.assumedCount).toBe(2);

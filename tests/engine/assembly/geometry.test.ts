@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { edges, faceSize, innerSize, outsideFacing, verticalExtent } from '../../../server/engine/assembly/geometry.js';
+import { edges, edgeTowards, faceSize, innerSize } from '../../../server/engine/assembly/geometry.js';
+import { dot, normalOf, slopeExtents, sunDirection, tiltOf, upward } from '../../../server/engine/assembly/pose.js';
 import { meanRadiantFactors } from '../../../server/engine/assembly/surfaces.js';
 
 describe('The geometry of a box', () => {
@@ -26,11 +27,39 @@ describe('The geometry of a box', () => {
   });
 
   it('turns with the pose: laid on its back, the front looks up and the top sideways', () => {
-    expect(outsideFacing('front', 'front')).toBe('up');
-    expect(outsideFacing('back', 'front')).toBe('down');
-    expect(outsideFacing('top', 'front')).toBe('sideways');
-    expect(verticalExtent('top', 'front', faceSize('top', [3, 2, 1]))).toBe(2);
-    expect(verticalExtent('left', 'top', faceSize('left', [3, 2, 1]))).toBe(1);
+    const up = upward({ up: 'front', tiltDeg: 0, towards: null }, '/pose');
+    expect(tiltOf(normalOf('front'), up)).toBeCloseTo(0, 9);
+    expect(tiltOf(normalOf('back'), up)).toBeCloseTo(180, 9);
+    expect(tiltOf(normalOf('top'), up)).toBeCloseTo(90, 9);
+    expect(slopeExtents('top', up, faceSize('top', [3, 2, 1]))).toEqual([2, 3]);
+    expect(slopeExtents('left', upward({ up: 'top', tiltDeg: 0, towards: null }, ''), [2, 1])).toEqual([1, 2]);
+  });
+
+  it('leans: at 30° towards the front, the lid looks 30° off and the front 120° from straight up', () => {
+    const up = upward({ up: 'top', tiltDeg: 30, towards: 'front' }, '/pose');
+    expect(tiltOf(normalOf('top'), up)).toBeCloseTo(30, 9);
+    expect(tiltOf(normalOf('front'), up)).toBeCloseTo(120, 9);
+    expect(tiltOf(normalOf('back'), up)).toBeCloseTo(60, 9);
+    expect(tiltOf(normalOf('left'), up)).toBeCloseTo(90, 9);
+    expect(() => upward({ up: 'top', tiltDeg: 30, towards: 'bottom' }, '/pose')).toThrow('beside');
+  });
+
+  it('has the sun at noon over the lid, in the morning before the front, and to the right at 90°', () => {
+    const up = upward({ up: 'top', tiltDeg: 0, towards: null }, '/pose');
+    const lit = (elevationDeg: number, azimuthDeg: number, face: 'top' | 'front' | 'right' | 'left') =>
+      dot(sunDirection({ elevationDeg, azimuthDeg }, up), normalOf(face));
+    expect(lit(90, 0, 'top')).toBeCloseTo(1, 9);
+    expect(lit(0, 0, 'front')).toBeCloseTo(1, 9);
+    expect(lit(0, 90, 'right')).toBeCloseTo(1, 9);
+    expect(lit(30, 0, 'top')).toBeCloseTo(0.5, 9);
+    expect(lit(0, 90, 'left')).toBeCloseTo(-1, 9);
+  });
+
+  it('names the edge at which two faces meet, alike from both', () => {
+    expect(edgeTowards('bottom', 'left')).toBe('x0');
+    expect(edgeTowards('left', 'bottom')).toBe('y0');
+    expect(edgeTowards('front', 'top')).toBe('y1');
+    expect(edgeTowards('top', 'back')).toBe('y1');
   });
 
   it('has mean radiant factors of 6/5 for a cube, whose faces see five sixths of the whole', () => {

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { assemblyDocumentSchema, faceNames } from '../../../shared/schemas/assembly.js';
 import { resolveAssembly } from '../../../server/engine/assembly/resolve.js';
 import { EngineError } from '../../../server/engine/errors.js';
-import { lamp, lampInput, printedWall, sixWalls } from '../fixtures.js';
+import { lamp, lampHousing, lampInput, printedWall, sixWalls } from '../fixtures.js';
 
 function refusal(document: Parameters<typeof resolveAssembly>[0]): { path: string; message: string }[] {
   try {
@@ -34,14 +34,41 @@ describe('Checking an assembly', () => {
 
   it('refuses walls that leave no room', () => {
     const faces = sixWalls({ ...printedWall, wallM: 0.05 });
-    expect(refusal(lamp({ housing: { ...lampInput.housing, faces } }))[0]?.path).toBe('/housing/outerM/1');
+    expect(refusal(lamp({ housing: { ...lampHousing, faces } }))[0]?.path).toBe('/housing/outerM/1');
   });
 
   it('refuses a plate larger than its face, and parts that need more than their plate', () => {
     const plate = lampInput.carriers?.[0];
     if (plate?.kind !== 'plate') throw new Error('no plate');
     expect(refusal(lamp({ carriers: [{ ...plate, sizeM: [0.2, 0.07] }] }))[0]?.path).toBe('/carriers/0/sizeM');
-    expect(refusal(lamp({ carriers: [{ ...plate, sizeM: [0.021, 0.021] }] }))[0]?.path).toBe('/carriers/0/sizeM');
+    expect(refusal(lamp({ carriers: [{ ...plate, sizeM: [0.01, 0.01] }] }))[0]?.path).toBe('/parts/0/mount/on');
+    const parts = lampInput.parts.map((part) => ({ ...part, mount: { on: 'plate', stack: [] } }));
+    expect(refusal(lamp({ carriers: [{ ...plate, sizeM: [0.021, 0.021] }], parts }))[0]?.path).toBe(
+      '/parts/1/mount/on',
+    );
+  });
+
+  it('refuses parts over each other or over the edge, at their position', () => {
+    const at = (xM: number) =>
+      lampInput.parts.map((part, i) => ({ ...part, mount: { ...part.mount, xM: i ? xM : 0.03 } }));
+    expect(refusal(lamp({ parts: at(0.035) }))[0]).toEqual({
+      path: '/parts/1/mount/xM',
+      message: 'right lies over left',
+    });
+    expect(refusal(lamp({ parts: at(0.118) }))[0]).toEqual({
+      path: '/parts/1/mount/xM',
+      message: 'right hangs over the edge of “plate”',
+    });
+  });
+
+  it('spreads parts of unknown position evenly, and says so', () => {
+    const parts = lampInput.parts.map((part) => ({ ...part, mount: { ...part.mount, xM: null, yM: null } }));
+    const resolved = resolveAssembly(lamp({ parts }));
+    expect(resolved.parts.map(({ at }) => at.xM + at.sizeM[0] / 2)).toEqual([
+      expect.closeTo(0.03, 9) as number,
+      expect.closeTo(0.09, 9) as number,
+    ]);
+    expect(resolved.assumptions.map(({ key }) => key)).toEqual(['positions']);
   });
 
   it('refuses two parts of one id, and a drive that is not there', () => {
@@ -66,7 +93,7 @@ describe('Not knowing', () => {
   const unknown = assemblyDocumentSchema.parse({
     ...lampInput,
     housing: {
-      ...lampInput.housing,
+      ...lampHousing,
       touched: null,
       faces: sixWalls({ wallM: null, material: null, finishOutside: null, finishInside: null, print: null }),
     },
@@ -76,18 +103,18 @@ describe('Not knowing', () => {
   });
 
   it('takes the cautious default and lists each once, with all its fields', () => {
-    const { assumptions, faces } = resolveAssembly(unknown);
+    const { assumptions, box } = resolveAssembly(unknown);
     const wall = assumptions.find(({ key }) => key === 'wallM');
     expect(wall?.paths).toEqual(faceNames.map((name) => `/housing/faces/${name}/wallM`));
-    expect(faces.top.wallM).toBe(wall?.value);
+    expect(box?.faces.top.wallM).toBe(wall?.value);
     expect(assumptions.map(({ key }) => key)).toEqual(
       expect.arrayContaining(['material', 'loadState', 'touched', 'jointPrinted', 'lightKeptShare', 'airC']),
     );
   });
 
   it('takes the typical value for the one that is asked about, and only that', () => {
-    const { faces, scenarios } = resolveAssembly(unknown, new Set(['wallM']));
-    expect(faces.top.wallM).toBe(0.002);
+    const { box, scenarios } = resolveAssembly(unknown, new Set(['wallM']));
+    expect(box?.faces.top.wallM).toBe(0.002);
     expect(scenarios[0]?.airC).toBe(40);
   });
 

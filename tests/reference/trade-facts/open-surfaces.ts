@@ -48,14 +48,14 @@ export function plainBox(
   rest: Pick<AssemblyDocumentInput, 'parts' | 'carriers' | 'supplies'>,
 ) {
   const finish = { inline: bySlug(finishes, box.finish) };
-  const wall: AssemblyDocumentInput['housing']['faces']['top'] = {
+  const wall: NonNullable<AssemblyDocumentInput['housing']>['faces']['top'] = {
     wallM: box.wallM,
     material: { inline: bySlug(materials, box.material) },
     finishOutside: finish,
     finishInside: finish,
     loadState: 'free',
   };
-  const faces = Object.fromEntries(faceNames.map((name) => [name, wall])) as AssemblyDocumentInput['housing']['faces'];
+  const faces = Object.fromEntries(faceNames.map((name) => [name, wall])) as NonNullable<AssemblyDocumentInput['housing']>['faces'];
   return assemblyDocumentSchema.parse({
     format: 'trimwick-assembly/1',
     name: 'Plain box',
