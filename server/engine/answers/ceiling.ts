@@ -2,12 +2,12 @@ import type { CeilingAnswer, Drive } from '../../../shared/schemas/network-answe
 import type { NetworkDocument, NetworkLimit } from '../../../shared/schemas/network.js';
 import { deviceAnswers, type LimitReader } from '../network/answer.js';
 import type { PreparedNetwork } from '../network/prepared.js';
-import { Trajectory, type Point } from './trajectory.js';
+import { large, Trajectory, type Point } from './trajectory.js';
 
 /** Multiples of the present drive that are scanned: zero, then growing by a factor up to the end of the range. */
 const range: [number, number] = [0, 100];
 /** Fine steps for small networks; for large ones, whose every solution is dear, coarse ones: the cubics between them know the slopes. */
-const fineScan = { first: 0.01, factor: 1.4, upTo: 250 };
+const fineScan = { first: 0.01, factor: 1.4 };
 const coarseScan = { first: 0.0625, factor: 2 };
 /** In a large network crossings are looked for up to this multiple of the least one. */
 const farEnough = 8;
@@ -16,7 +16,7 @@ const looks = 8;
 /** A crossing is found to this share of itself. */
 const bracket = 3e-8;
 /** Crossings this near to the least one are found as exactly as that. */
-const contender = 0.02;
+const contender = 2e-3;
 const mostRefinements = 40;
 
 interface Crossing {
@@ -105,7 +105,7 @@ function scan(
   onlyBinding: boolean,
 ): { last: number; runaway?: NonNullable<CeilingAnswer['runaway']> } {
   const { readers, network } = trajectory;
-  const steps = network.unknownCount <= fineScan.upTo ? fineScan : coarseScan;
+  const steps = network.unknownCount <= large ? fineScan : coarseScan;
   const open = new Set(readers.keys());
   let last = 0;
   let least = Infinity;
@@ -167,7 +167,7 @@ export function ceilingAlong(trajectory: Trajectory, drive: Drive, onlyBinding: 
     const scale = firstCrossing(trajectory, limit);
     return scale === null ? [] : [{ limit, scale }];
   });
-  const fine = network.unknownCount <= fineScan.upTo;
+  const fine = network.unknownCount <= large;
   const least = () => crossings.reduce((scale, crossing) => Math.min(scale, crossing.scale), Infinity);
   // From the least on, as long as one could still be the least or all are wanted exactly.
   crossings.sort((a, b) => a.scale - b.scale);

@@ -17,7 +17,7 @@ const residualTolerance = 1e-11;
 const rounding = 8 * Number.EPSILON;
 /** From this many unknowns on, a factorisation that still serves well is used again: while each step is this share of the last, or less. */
 const worthReusing = 200;
-const servesWell = 0.25;
+const servesWell = 0.45;
 
 export interface SteadyState {
   iterations: number;
@@ -38,9 +38,9 @@ function heatScale(network: PreparedNetwork): number {
 }
 
 /** Largest residual beyond its tolerance: converged where this is at most 1. */
-function excess(network: PreparedNetwork): number {
+function excess(network: PreparedNetwork, looser = 1): number {
   const { residual, stiffness, temperatures, unknownCount } = network;
-  const allowed = residualTolerance * heatScale(network);
+  const allowed = residualTolerance * looser * heatScale(network);
   let worst = 0;
   for (let i = 0; i < unknownCount; i++) {
     const floor = rounding * (stiffness[i] as number) * (temperatures[i] as number);
@@ -171,10 +171,10 @@ function foretoldStep(step: Float64Array, last: Float64Array, newMatrix: boolean
  * It ends where the residual is within its tolerance and the step that would follow within its own (as the last two steps foretell it:
  * by their square where the matrix was new, by their ratio where it was not), or where rounding lets no step shrink further.
  */
-function newton(network: PreparedNetwork, { base, step, weight, last }: Workspace): number {
+function newton(network: PreparedNetwork, { base, step, weight, last }: Workspace, looser: number): number {
   const { unknownCount, stiffness } = network;
   network.evaluate();
-  let done = excess(network) <= 1;
+  let done = excess(network, looser) <= 1;
   if (done && network.isLinear) return 1;
   let lastLargest = Infinity;
   let ratio = 1;
@@ -199,7 +199,7 @@ function newton(network: PreparedNetwork, { base, step, weight, last }: Workspac
     solveForStep(network, step);
     const largest = largestOf(step, unknownCount);
     if (!Number.isFinite(before) || !Number.isFinite(largest)) return -1;
-    if (done && largest <= stepTolerance) return iteration;
+    if (done && largest <= stepTolerance * looser) return iteration;
     // Within the tolerance already: full steps, as long as each is shorter than the last.
     if (done && largest >= 0.9 * lastLargest) return iteration;
     let scale = largest > largestStep ? largestStep / largest : 1;
@@ -217,19 +217,20 @@ function newton(network: PreparedNetwork, { base, step, weight, last }: Workspac
       network.temperatures.set(base);
       network.evaluate();
       // No step makes it better, and the step says that the answer lies within the tolerance: rounding is all that is left.
-      if (largest <= stepTolerance) return iteration;
+      if (largest <= stepTolerance * looser) return iteration;
       if (!reuse) return -1;
       network.factored = false;
       ratio = 1;
       continue;
     }
-    done = excess(network) <= 1;
+    done = excess(network, looser) <= 1;
     ratio = largest / lastLargest;
-    if (done && scale === 1 && iteration > 1 && foretoldStep(step, last, !reuse) <= stepTolerance) return iteration;
+    if (done && scale === 1 && iteration > 1 && foretoldStep(step, last, !reuse) <= stepTolerance * looser)
+      return iteration;
     for (let i = 0; i < unknownCount; i++) last[i] = step[i] as number;
     lastLargest = largest;
   }
-  return excess(network) <= 1 ? mostIterations : -1;
+  return excess(network, looser) <= 1 ? mostIterations : -1;
 }
 
 /**
@@ -307,15 +308,16 @@ function isStable(network: PreparedNetwork): boolean {
  * Newton first; where it fails, or ends in a state that the slightest push would leave, a pseudo-transient warm-up
  * and Newton again.
  *
+ * @param looser how many times looser the tolerances may be, for states on the way to an answer
  * @throws EngineError `runaway` or `not-converged`: there is never an unconverged answer
  */
-export function solveSteady(network: PreparedNetwork): SteadyState {
+export function solveSteady(network: PreparedNetwork, looser = 1): SteadyState {
   if (network.unknownCount === 0) {
     network.evaluate();
     return { iterations: 0, stable: true };
   }
   const workspace = workspaceOf(network);
-  let iterations = newton(network, workspace);
+  let iterations = newton(network, workspace, looser);
   if (iterations > 0 && isStable(network)) {
     refuseTooHot(network);
     return { iterations, stable: true };
@@ -325,7 +327,7 @@ export function solveSteady(network: PreparedNetwork): SteadyState {
   if (found) stagger(network);
   else firstGuess(network);
   const steps = transient(network, workspace);
-  iterations = newton(network, workspace);
+  iterations = newton(network, workspace, looser);
   if (iterations > 0) {
     refuseTooHot(network);
     return {
