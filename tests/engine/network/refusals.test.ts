@@ -47,6 +47,114 @@ describe('A network is refused by name', () => {
       'no-path-to-fixed',
       '/nodes/1',
     ],
+    [
+      'a path that carries nothing: an opening of zero',
+      {
+        nodes: [amb, a],
+        links: [{ kind: 'ventilation', from: 'a', to: 'amb', inletAreaM2: 0, outletAreaM2: 1e-4, heightM: 0.1 }],
+      },
+      'no-path-to-fixed',
+      '/nodes/1',
+    ],
+    [
+      'an inclined plate without its tilt',
+      {
+        nodes: [amb, a],
+        links: [{ kind: 'convection', from: 'a', to: 'amb', shape: 'inclined-plate', areaM2: 0.01, lengthM: 0.1 }],
+      },
+      'invalid-document',
+      '/links/0/tiltDeg',
+    ],
+    [
+      'a vertical cylinder without its diameter',
+      {
+        nodes: [amb, a],
+        links: [{ kind: 'convection', from: 'a', to: 'amb', shape: 'vertical-cylinder', areaM2: 0.01, lengthM: 0.1 }],
+      },
+      'invalid-document',
+      '/links/0/diameterM',
+    ],
+    [
+      'fins that leave no gap',
+      {
+        nodes: [amb, a],
+        links: [
+          {
+            kind: 'fin-array',
+            from: 'a',
+            to: 'amb',
+            baseWidthM: 0.05,
+            baseHeightM: 0.1,
+            finHeightM: 0.02,
+            finThicknessM: 0.005,
+            finCount: 10,
+            conductivityWPerMK: 200,
+          },
+        ],
+      },
+      'invalid-document',
+      '/links/0/finCount',
+    ],
+    [
+      'fins that lean more than 45°',
+      {
+        nodes: [amb, a],
+        links: [
+          {
+            kind: 'fin-array',
+            from: 'a',
+            to: 'amb',
+            baseWidthM: 0.05,
+            baseHeightM: 0.1,
+            finHeightM: 0.02,
+            finThicknessM: 0.001,
+            finCount: 10,
+            conductivityWPerMK: 200,
+            tiltDeg: 60,
+          },
+        ],
+      },
+      'invalid-document',
+      '/links/0/tiltDeg',
+    ],
+    [
+      'ventilation without a height',
+      {
+        nodes: [amb, a],
+        links: [{ kind: 'ventilation', from: 'a', to: 'amb', inletAreaM2: 1e-4, outletAreaM2: 1e-4 }],
+      },
+      'invalid-document',
+      '/links/0/heightM',
+    ],
+    [
+      'a grid that touches nothing',
+      {
+        nodes: [amb, a],
+        links: fine,
+        grids: [
+          { id: 'g', sizeM: [0.1, 0.1], layers: [{ thicknessM: 0.002, inPlaneWPerMK: 200, throughWPerMK: 200 }] },
+        ],
+      },
+      'no-path-to-fixed',
+      '/grids/0',
+    ],
+    [
+      'a patch that hangs over its grid',
+      {
+        nodes: [amb, a],
+        links: fine,
+        grids: [
+          {
+            id: 'g',
+            sizeM: [0.1, 0.1],
+            layers: [{ thicknessM: 0.002, inPlaneWPerMK: 200, throughWPerMK: 200 }],
+            patches: [{ node: 'a', side: 'near', xM: 0.09, yM: 0.01, sizeM: [0.02, 0.02] }],
+          },
+        ],
+      },
+      'invalid-document',
+      '/grids/0/patches/0',
+    ],
     ['heat into a fixed node', { nodes: [{ ...amb, heatW: 1 }, a], links: fine }, 'heat-into-fixed', '/nodes/0/heatW'],
     [
       'light on a fixed node',
