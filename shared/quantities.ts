@@ -22,6 +22,18 @@ export const quantities = {
   temperature: { unit: '°C', shown: '°C', perUnit: 1, noun: 'a temperature', examples: '°C, °F or K' },
   power: { unit: 'W', shown: 'W', perUnit: 1, noun: 'a power', examples: 'W or mW' },
   current: { unit: 'A', shown: 'A', perUnit: 1, noun: 'a current', examples: 'A or mA' },
+  area: { unit: 'm²', shown: 'mm²', perUnit: 1e6, noun: 'an area', examples: 'mm², cm² or m²' },
+  speed: { unit: 'm/s', shown: 'm/s', perUnit: 1, noun: 'a speed', examples: 'm/s or km/h' },
+  angle: { unit: '°', shown: '°', perUnit: 1, noun: 'an angle', examples: '°' },
+  flow: { unit: 'm³/s', shown: 'l/s', perUnit: 1000, noun: 'a flow', examples: 'l/s or m³/h' },
+  pressure: { unit: 'Pa', shown: 'Pa', perUnit: 1, noun: 'a pressure', examples: 'Pa or mbar' },
+  arealResistance: {
+    unit: 'K m²/W',
+    shown: 'K cm²/W',
+    perUnit: 1e4,
+    noun: 'a resistance of an area',
+    examples: 'K cm²/W',
+  },
   irradiance: { unit: 'W/m²', shown: 'W/m²', perUnit: 1, noun: 'an irradiance', examples: 'W/m²' },
   share: { unit: '', shown: '%', perUnit: 100, noun: 'a share', examples: '%' },
   count: { unit: '', shown: '', perUnit: 1, noun: 'a number', examples: 'a bare number' },
@@ -221,7 +233,8 @@ export function readQuantity(text: string, kind: QuantityKind, converter?: UnitC
 export function inFieldUnit(message: string, kind: QuantityKind): string {
   const { unit, shown, perUnit } = quantities[kind];
   if (perUnit === 1) return message;
-  const pattern =
-    unit === '' ? /(?<=(?:at least|at most|than) )(-?[\d.]+(?:e[+-]?\d+)?)$/ : /(-?[\d.]+(?:e[+-]?\d+)?) m$/;
+  const end =
+    unit === '' ? '(?<=(?:at least|at most|than) )(-?[\\d.]+(?:e[+-]?\\d+)?)$' : `(-?[\\d.]+(?:e[+-]?\\d+)?) ${unit}$`;
+  const pattern = new RegExp(end);
   return message.replace(pattern, (_, number: string) => `${formatNumber(Number(number) * perUnit)} ${shown}`);
 }

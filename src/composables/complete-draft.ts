@@ -42,24 +42,28 @@ export function completeDraft(draft: unknown): AssemblyDocumentInput {
     name: '',
     note: '',
     drive: null,
-    leads: [],
     cutOuts: [],
     limits: [],
     ...given,
     format: given.format ?? assemblyFormat,
-    housing: {
-      touched: null,
-      fill: { kind: 'air' },
-      ...housing,
-      outerM: pair(housing.outerM, 3),
-      pose: { up: 'top', tiltDeg: 0, ...record(housing.pose) },
-      faces: Object.fromEntries(faceNames.map((face) => [face, wall(faces[face])])),
-    },
+    housing:
+      given.housing === null
+        ? null
+        : {
+            touched: null,
+            fill: { kind: 'air' },
+            fan: null,
+            ...housing,
+            outerM: pair(housing.outerM, 3),
+            pose: { up: 'top', tiltDeg: 0, towards: null, ...record(housing.pose) },
+            faces: Object.fromEntries(faceNames.map((face) => [face, wall(faces[face])])),
+          },
     carriers: records(given.carriers).map((carrier) => ({
       ...carrier,
       sizeM: pair(carrier.sizeM, 2),
-      on: { face: 'bottom', ...record(carrier.on) },
+      on: given.housing === null ? null : { face: 'bottom', ...record(carrier.on) },
       ...(carrier.kind === 'board' ? { layers: records(carrier.layers) } : {}),
+      ...(carrier.kind === 'fins' ? { fins: record(carrier.fins) } : {}),
     })),
     parts: records(given.parts).map((part) => ({
       supply: null,
@@ -71,11 +75,14 @@ export function completeDraft(draft: unknown): AssemblyDocumentInput {
       mount: { on: '', stack: null, ...record(part.mount) },
     })),
     supplies: records(given.supplies).map((supply) => ({ maxA: null, ...supply })),
+    leads: records(given.leads),
     scenarios: records(given.scenarios).map((scenario) => ({
       airC: null,
       surroundingsC: null,
       altitudeM: 0,
       airSpeedMPerS: 0,
+      skyC: null,
+      pose: null,
       sun: null,
       mustHold: true,
       fault: null,

@@ -5,6 +5,11 @@ import { pointerSegments } from './document-path.js';
 function kindOf(field: string): QuantityKind | null {
   if (field === 'altitudeM') return 'altitude';
   if (field === 'irradianceWPerM2') return 'irradiance';
+  if (field.endsWith('M2')) return 'area';
+  if (field.endsWith('KM2PerW')) return 'arealResistance';
+  if (field.endsWith('M3PerS')) return 'flow';
+  if (field.endsWith('MPerS')) return 'speed';
+  if (field.endsWith('Deg')) return 'angle';
   if (field.endsWith('Share') || field === 'coverage' || field === 'glazingTransmittance') return 'share';
   if (/(^outer|^size|[a-z])M$/.test(field)) return 'length';
   if (field.endsWith('C')) return 'temperature';

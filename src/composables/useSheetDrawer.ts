@@ -3,7 +3,7 @@ import { pointerSegments } from './document-path.js';
 
 /** What the drawer beside the sheet shows. */
 export type DrawerSubject =
-  | { kind: 'part' | 'carrier' | 'supply' | 'scenario'; index: number }
+  | { kind: 'part' | 'carrier' | 'supply' | 'lead' | 'scenario'; index: number }
   | { kind: 'working'; node: string }
   | { kind: 'assumed' };
 
@@ -18,7 +18,7 @@ interface SheetDrawer {
 }
 
 const key: InjectionKey<SheetDrawer> = Symbol('sheet drawer');
-const kinds = { parts: 'part', carriers: 'carrier', supplies: 'supply', scenarios: 'scenario' } as const;
+const kinds = { parts: 'part', carriers: 'carrier', supplies: 'supply', leads: 'lead', scenarios: 'scenario' } as const;
 
 /** The drawer that holds the field of a pointer; `null` for fields on the sheet itself. */
 export function drawerOf(pointer: string): DrawerSubject | null {

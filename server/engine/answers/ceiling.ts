@@ -211,7 +211,7 @@ export function ceilingBelow(trajectory: Trajectory, drive: Drive, above: number
   const holds = (point: Point) => readers.every((_, limit) => trajectory.excessAt(limit, point) <= 0);
   if (!trajectory.points.some(({ scale }) => scale === above) && !trajectory.solve(above)) return null;
   let low = above;
-  let point: Point | null = null;
+  let point: Point | null;
   do {
     low *= 0.9;
     point = trajectory.solve(low);

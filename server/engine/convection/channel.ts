@@ -56,15 +56,17 @@ export function nusseltChannelElenbaas(el: number, out: ChannelNusselt): void {
   out.byLogEl = out.nu * (1 - (0.75 * x * Math.exp(-x)) / open);
 }
 
+export const defaultChannel: ChannelCorrelation = {
+  id: 'bar-cohen-rohsenow',
+  shape: 'channel',
+  formula: 'Nu = (576/El² + 2.873/√El)^(−½), El = Ra_s s/H',
+  source: 'Bar-Cohen & Rohsenow, J. Heat Transfer 106 (1984) 116',
+  range: { el: [0.1, 1e5] },
+  evaluate: nusseltChannelBarCohenRohsenow,
+};
+
 export const channelCorrelations: ChannelCorrelation[] = [
-  {
-    id: 'bar-cohen-rohsenow',
-    shape: 'channel',
-    formula: 'Nu = (576/El² + 2.873/√El)^(−½), El = Ra_s s/H',
-    source: 'Bar-Cohen & Rohsenow, J. Heat Transfer 106 (1984) 116',
-    range: { el: [0.1, 1e5] },
-    evaluate: nusseltChannelBarCohenRohsenow,
-  },
+  defaultChannel,
   {
     id: 'elenbaas',
     shape: 'channel',
@@ -76,5 +78,5 @@ export const channelCorrelations: ChannelCorrelation[] = [
 ];
 
 export function findChannelCorrelation(id: string | undefined): ChannelCorrelation | undefined {
-  return id === undefined ? channelCorrelations[0] : channelCorrelations.find((law) => law.id === id);
+  return id === undefined ? defaultChannel : channelCorrelations.find((law) => law.id === id);
 }

@@ -97,6 +97,11 @@ export function correlationEntries(): CorrelationEntry[] {
   }));
   return [...natural, ...forced, ...gaps, ...channels].map((entry) => ({
     ...entry,
-    range: Object.fromEntries(Object.entries(entry.range).map(([key, value]) => [key, [value[0], value[1]]])),
+    range: Object.fromEntries(
+      Object.entries(entry.range as Record<string, readonly [number, number | null]>).map(([key, [from, to]]) => [
+        key,
+        [from, to] as [number, number | null],
+      ]),
+    ),
   }));
 }

@@ -1,4 +1,4 @@
-import type { GridEdge, GridLayer, NetworkGrid } from '../../../shared/schemas/network-grid.js';
+import type { GridEdge, NetworkGrid } from '../../../shared/schemas/network-grid.js';
 import { choosePlanes, planeConductances } from './layers.js';
 import { gridLines, type Stretch } from './lines.js';
 
@@ -95,7 +95,7 @@ export class Mesh {
     const columns = this.nx * this.ny;
     this.sheet = new Float64Array(this.cellCount);
     const through = new Float64Array(Math.max(this.nz - 1, 0) * columns);
-    const zoned = grid.zones.map((zone) => ({ zone, ...planeConductances(planes, zone.layers as GridLayer[]) }));
+    const zoned = grid.zones.map((zone) => ({ zone, ...planeConductances(planes, zone.layers) }));
     for (let c = 0; c < columns; c++) {
       const x = this.middleX(c % this.nx);
       const y = this.middleY(Math.floor(c / this.nx));

@@ -27,6 +27,16 @@ type SurfacePlace =
   | { kind: 'film'; film: CellFilm }
   | { kind: 'linear' | 'radiative'; from: number; to: number; areaM2: number; coefficient: number };
 
+/** Name under which the flow over an edge to a node is reported. */
+export function edgeFlowId(grid: string, index: number, half: 'near' | 'far'): string {
+  return `${grid}.edge.${String(index + 1)}.${half}`;
+}
+
+/** Name under which the flow over an edge into another grid is reported. */
+export function edgeJoinFlowId(grid: string, index: number): string {
+  return `${grid}.edge-join.${String(index + 1)}`;
+}
+
 /** Surfaces whose law gives one film coefficient for all their cells. */
 type FilmSurface = Exclude<GridSurface, { kind: 'radiation' | 'film' }>;
 
@@ -170,21 +180,27 @@ export class PreparedNetwork implements System {
         pairs,
       );
     }
-    for (const { edge, near, far, resistanceKMPerW } of grid.edges) {
-      const ends = [this.numberOf(near), this.numberOf(far)] as const;
-      for (const { i, j, from, to } of mesh.alongEdge(edge)) {
-        for (let k = 0; k < mesh.nz; k++) {
-          // Each plane goes to the node of its half; a single plane to both.
-          const targets = mesh.nz === 1 ? ends : [2 * k < mesh.nz ? ends[0] : ends[1]];
-          const half = mesh.halfCellToEdge(i, j, k, edge);
-          const beyond = resistanceKMPerW * Math.max(mesh.nz, 2);
-          for (const target of targets) {
-            const own = mesh.nz === 1 ? 2 / half : 1 / half;
+    grid.edges.forEach(({ edge, near, far, resistanceKMPerW }, e) => {
+      for (const half of ['near', 'far'] as const) {
+        const first = this.linear.length;
+        const target = this.numberOf(half === 'near' ? near : far);
+        for (const { i, j, from, to } of mesh.alongEdge(edge)) {
+          for (let k = 0; k < mesh.nz; k++) {
+            // Each plane goes to the node of its half; a single plane to both.
+            if (mesh.nz > 1 && 2 * k < mesh.nz !== (half === 'near')) continue;
+            const own = (mesh.nz === 1 ? 2 : 1) / mesh.halfCellToEdge(i, j, k, edge);
+            const beyond = resistanceKMPerW * Math.max(mesh.nz, 2);
             this.linear.add(base + mesh.cell(i, j, k), target, (to - from) / (own + beyond), pairs);
           }
         }
+        this.noteLinear(edgeFlowId(grid.id, e, half), first, 0);
       }
-    }
+    });
+  }
+
+  /** Keeps a stretch of linear links under a name, to report their flow together. */
+  private noteLinear(id: string, from: number, areaM2: number): void {
+    this.surfaces.set(id, { kind: 'linear', from, to: this.linear.length, areaM2, coefficient: 0 });
   }
 
   private placeSurface(placed: PlacedGrid, surface: GridSurface, row: number, pairs: Pairs): number {
@@ -239,9 +255,11 @@ export class PreparedNetwork implements System {
           coefficient: join.emissivity,
         });
       }
-      for (const { edge, grid, gridEdge } of placed.grid.edgeJoins) {
+      placed.grid.edgeJoins.forEach(({ edge, grid, gridEdge }, e) => {
+        const first = this.linear.length;
         this.placeEdgeJoin(placed, edge, byId.get(grid) as PlacedGrid, gridEdge, pairs);
-      }
+        this.noteLinear(edgeJoinFlowId(placed.grid.id, e), first, 0);
+      });
     }
   }
 

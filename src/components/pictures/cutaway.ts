@@ -41,9 +41,9 @@ function temperatureOf(estimate: Estimate, node: string): number {
   return estimate.nodes.find(({ id }) => id === node)?.temperatureC ?? NaN;
 }
 
-/** Heat that leaves a face’s outside for the room, by air and by radiation [W]. */
+/** Heat that leaves a face’s outside for the room, by air, by radiation or by what it is held against [W]. */
 export function heatThrough(estimate: Estimate, face: FaceName): number {
-  return ['convection', 'radiation'].reduce(
+  return ['convection', 'radiation', 'sky', 'gap', 'joint', 'cover'].reduce(
     (sum, kind) => sum + (estimate.flowsW[`face.${face}.outside.${kind}`] ?? 0),
     0,
   );
@@ -66,8 +66,9 @@ function number(value: unknown, otherwise: number): number {
 function shareOf(
   document: AssemblyDocumentInput,
   frame: Frame,
-  carrier: { sizeM: readonly unknown[]; on: { face: FaceName } },
+  carrier: { sizeM: readonly unknown[]; on?: { face: FaceName } | null | undefined },
 ): number {
+  if (!carrier.on || !document.housing) return 0.8;
   const along =
     carrier.on.face === frame.view.up || carrier.on.face === frame.view.down
       ? frame.view.acrossAxis
@@ -97,7 +98,7 @@ function partBlocks(document: AssemblyDocumentInput, estimate: Estimate, frame: 
   for (const part of document.parts) groups.set(part.mount.on, [...(groups.get(part.mount.on) ?? []), part]);
   for (const [on, parts] of groups) {
     const carrier = document.carriers?.find(({ id }) => id === on);
-    const face = carrier?.on.face ?? faceNames.find((name) => on === `face.${name}`);
+    const face = carrier?.on?.face ?? faceNames.find((name) => on === `face.${name}`);
     if (face === undefined) continue;
     const room = carrier ? shareOf(document, frame, carrier) : 0.8;
     const standOff = carrier?.kind === 'board' ? 16 : 0;
@@ -116,7 +117,7 @@ function partBlocks(document: AssemblyDocumentInput, estimate: Estimate, frame: 
 
 /** A section of the housing in the pose of use: walls, carriers, parts, and the heat that leaves. */
 export function cutaway(document: AssemblyDocumentInput, estimate: Estimate, width: number) {
-  const view = elevation(document.housing.outerM, document.housing.pose?.up ?? 'top');
+  const view = elevation(document.housing?.outerM ?? [0.1, 0.1, 0.1], document.housing?.pose?.up ?? 'top');
   const boxWidth = width - 2 * edge;
   const boxHeight = Math.min(Math.max((boxWidth * view.heightM) / view.widthM, 130), 250);
   const height = boxHeight + 2 * edge;
@@ -141,7 +142,7 @@ export function cutaway(document: AssemblyDocumentInput, estimate: Estimate, wid
   const carriers = (document.carriers ?? []).map((carrier): CutawayBlock => {
     const node = `carrier.${carrier.id}.mean`;
     const off = carrier.kind === 'board' ? 16 : 0;
-    const box = slab(frame, carrier.on.face, off, carrierPx, shareOf(document, frame, carrier));
+    const box = slab(frame, carrier.on?.face ?? view.down, off, carrierPx, shareOf(document, frame, carrier));
     return { node, label: `${carrier.kind} ${carrier.id}`, temperatureC: temperatureOf(estimate, node), ...box };
   });
   const drawn = [view.up, view.down, view.near, view.far];

@@ -6,5 +6,7 @@ export interface NetFace {
   colour: string | null;
   /** Held against something, and takes no part in the cooling. */
   against: boolean;
+  /** Openings. */
+  vents: number;
   wrong: boolean;
 }

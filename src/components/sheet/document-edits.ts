@@ -1,4 +1,4 @@
-import type { AssemblyDocumentInput } from '../../../shared/schemas/assembly.js';
+import { faceNames, type AssemblyDocumentInput } from '../../../shared/schemas/assembly.js';
 import { plainHeat } from '../../../shared/first-assembly.js';
 import type { MaterialVersion } from '../../../shared/schemas/reference-lists.js';
 
@@ -17,7 +17,7 @@ export function freeId(stem: string, taken: readonly { id: string }[]): string {
 
 export function addPart(document: Document): Document {
   const id = freeId('part', document.parts);
-  const on = document.carriers?.[0]?.id ?? 'face.bottom';
+  const on = document.carriers?.[0]?.id ?? (document.housing === null ? '' : 'face.bottom');
   return {
     ...document,
     parts: [
@@ -38,7 +38,7 @@ export function addPart(document: Document): Document {
 }
 
 function inner(document: Document): [number, number] {
-  const [x, y] = document.housing.outerM;
+  const [x, y] = document.housing?.outerM ?? [0.1, 0.08];
   const share = (size: unknown) => (typeof size === 'number' ? Math.max(Math.round(size * 750) / 1000, 0.003) : 0.05);
   return [share(x), share(y)];
 }
@@ -62,7 +62,7 @@ export function addPlate(document: Document, materials: readonly MaterialVersion
         thicknessM: 0.0015,
         material,
         finish: null,
-        on: { face: 'top', stack: null },
+        on: document.housing === null ? null : { face: 'top', stack: null },
       },
     ],
   };
@@ -84,9 +84,94 @@ export function addBoard(document: Document, materials: readonly MaterialVersion
         layers: [...foil, { material: { version: laminate.version }, thicknessM: 0.0016, coverage: 1 }, ...foil],
         finish: null,
         standOffM: null,
-        on: { face: 'bottom' },
+        on: document.housing === null ? null : { face: 'bottom' },
       },
     ],
+  };
+}
+
+/** A base plate with fins: in the open, or on the outside of the back. */
+export function addFins(document: Document, materials: readonly MaterialVersion[]): Document {
+  const material = versionOf(materials, /^aluminium-606/) ?? versionOf(materials, /alumin/i);
+  if (!material) return document;
+  return {
+    ...document,
+    carriers: [
+      ...(document.carriers ?? []),
+      {
+        id: freeId('sink', document.carriers ?? []),
+        kind: 'fins',
+        sizeM: [0.06, 0.04],
+        thicknessM: 0.003,
+        material,
+        finish: null,
+        facing: 'sideways',
+        fins: { heightM: 0.02, thicknessM: 0.001, count: 8, along: 'y' },
+        on: document.housing === null ? null : { face: 'back', stack: null },
+      },
+    ],
+  };
+}
+
+export function addLead(document: Document): Document {
+  const id = freeId('lead', document.leads ?? []);
+  return {
+    ...document,
+    leads: [
+      ...(document.leads ?? []),
+      {
+        id,
+        name: `Lead ${id.slice(5)}`,
+        part: document.parts[0]?.id ?? '',
+        supply: document.supplies?.[0]?.id ?? null,
+        currentA: null,
+        count: 2,
+        crossSectionM2: 7.5e-7,
+        insideM: 0.05,
+        outsideM: 1,
+        outerDiameterM: null,
+        insulationMaxC: 70,
+      },
+    ],
+  };
+}
+
+export function removeLead(document: Document, index: number): Document {
+  return { ...document, leads: (document.leads ?? []).filter((_, i) => i !== index) };
+}
+
+/** Takes the housing away: its carriers stand in the room. Only where no part stands on a wall. */
+export function removeHousing(document: Document): Document {
+  return {
+    ...document,
+    housing: null,
+    carriers: (document.carriers ?? []).map((carrier) => ({ ...carrier, on: null, facing: carrier.facing ?? 'up' })),
+    scenarios: document.scenarios.map((scenario) => ({ ...scenario, pose: null })),
+  };
+}
+
+/** A plain box round the carriers, of walls that nothing is known of yet. */
+export function addHousing(document: Document): Document {
+  const wall = { wallM: null, material: null, finishOutside: null, finishInside: null, print: null };
+  const largest = (axis: 0 | 1) =>
+    Math.max(
+      0.05,
+      ...(document.carriers ?? []).map(({ sizeM }) => (typeof sizeM[axis] === 'number' ? sizeM[axis] : 0)),
+    );
+  return {
+    ...document,
+    housing: {
+      outerM: [largest(0) + 0.03, largest(1) + 0.03, 0.05],
+      touched: null,
+      faces: Object.fromEntries(faceNames.map((face) => [face, wall])) as NonNullable<Document['housing']>['faces'],
+    },
+    carriers: (document.carriers ?? []).map((carrier): typeof carrier =>
+      carrier.kind === 'board'
+        ? { ...carrier, on: { face: 'bottom' } }
+        : carrier.kind === 'fins'
+          ? { ...carrier, on: { face: 'back', stack: null } }
+          : { ...carrier, on: { face: 'bottom', stack: null } },
+    ),
   };
 }
 
@@ -117,7 +202,9 @@ export function removeCarrier(document: Document, index: number): Document {
     ...document,
     carriers: (document.carriers ?? []).filter((_, i) => i !== index),
     parts: document.parts.map((part) =>
-      part.mount.on === gone.id ? { ...part, mount: { ...part.mount, on: `face.${gone.on.face}` } } : part,
+      part.mount.on === gone.id
+        ? { ...part, mount: { ...part.mount, on: gone.on ? `face.${gone.on.face}` : '' } }
+        : part,
     ),
   };
 }

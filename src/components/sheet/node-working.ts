@@ -213,6 +213,9 @@ function describeGrid(estimate: Estimate, link: string): Pick<WorkingRow, 'law' 
       inputs: [{ name: 'r', value: `${figures(join.resistanceKM2PerW)} K m²/W` }],
     };
   }
+  if (/\.edge(-join)?\.\d+/.test(link)) {
+    return { law: 'Conduction round the edge', formula: 'from cell to cell along the edge', inputs: [] };
+  }
   return link.endsWith('.spread')
     ? {
         law: 'Spreads into what it stands on',

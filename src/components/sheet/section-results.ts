@@ -16,12 +16,13 @@ export type SectionKey = (typeof sections)[number]['key'];
 
 /** The section that holds the field of a pointer. */
 export function sectionOf(pointer: string): SectionKey {
-  if (/^\/(parts|carriers|supplies|drive)/.test(pointer)) return 'parts';
+  if (/^\/(parts|carriers|supplies|leads|drive)/.test(pointer)) return 'parts';
   if (pointer.startsWith('/scenarios')) return 'scenarios';
   return pointer.startsWith('/limits') ? 'temperatures' : 'housing';
 }
 
 function housing(document: AssemblyDocumentInput, estimate: Estimate | null): string {
+  if (document.housing === null) return 'open assembly, no housing';
   const size = document.housing.outerM
     .map((side) => (typeof side === 'number' ? figures(side * 1000) : '?'))
     .join(' × ');

@@ -26,7 +26,10 @@ export const touchChoices: Choice[] = [
 
 export const exposureChoices: Choice[] = [
   { value: 'open', label: 'open to the room' },
-  { value: 'against-wall', label: 'held flat against something that takes no heat' },
+  { value: 'against-wall', label: 'held flat against something' },
+  { value: 'gap', label: 'before a surface, across a closed gap of air' },
+  { value: 'near', label: 'open, near a warm or cold surface' },
+  { value: 'covered', label: 'covered by cloth or dust' },
 ];
 
 export const patternChoices: Choice[] = [
@@ -42,4 +45,27 @@ export const arrangementChoices: Choice[] = [
 export const sunChoices: Choice[] = [
   { value: 'worst', label: 'the face that takes up most' },
   ...faceChoices.map(({ value, label }) => ({ value, label: `the ${label} face` })),
+];
+
+export const facingChoices: Choice[] = [
+  { value: 'up', label: 'up' },
+  { value: 'down', label: 'down' },
+  { value: 'sideways', label: 'sideways, upright' },
+];
+
+export const fillChoices: Choice[] = [
+  { value: 'air', label: 'air' },
+  { value: 'potting', label: 'potting, to a height' },
+  { value: 'foam', label: 'foam, all of it' },
+];
+
+export const fanChoices: Choice[] = [
+  { value: 'none', label: 'none' },
+  { value: 'flow', label: 'a given flow' },
+  { value: 'curve', label: 'a fan with its curve' },
+];
+
+export const finChoices: Choice[] = [
+  { value: 'x', label: 'the length' },
+  { value: 'y', label: 'the width' },
 ];

@@ -33,9 +33,11 @@ describe('the working of a temperature', () => {
   test('names the law and its inputs for each way of the heat', () => {
     const working = nodeWorking(estimate, 'face.top.outer');
     const laws = working?.rows.map(({ law }) => law) ?? [];
-    expect(laws.some((law) => law.startsWith('Natural convection, plate facing up'))).toBe(true);
-    expect(laws).toContain('Radiation');
-    expect(laws).toContain('Conduction');
+    expect(laws).toContain('Convection of its bare side, plate facing up, cell by cell');
+    expect(laws).toContain('Radiation of its bare side, cell by cell');
+    expect(laws).toContain('Conduction through the wall');
+    const front = nodeWorking(estimate, 'face.front.outer')?.rows.map(({ law }) => law) ?? [];
+    expect(front).toEqual(expect.arrayContaining(['Natural convection, upright plate', 'Radiation', 'Conduction']));
     expect(nodeWorking(estimate, 'no.such.place')).toBeNull();
   });
 });
@@ -136,15 +138,21 @@ describe('the pictures', () => {
 });
 
 describe('an unfinished draft', () => {
-  test.each([{}, { name: 5 }, { housing: null, parts: 'x' }, { housing: { faces: { top: 3 } }, carriers: [null] }])(
+  test.each([{}, { name: 5 }, { housing: 7, parts: 'x' }, { housing: { faces: { top: 3 } }, carriers: [null] }])(
     'gets the frame of a sheet, whatever it holds: %j',
     (draft) => {
       const document = completeDraft(draft);
-      expect(Object.keys(document.housing.faces)).toHaveLength(6);
+      expect(Object.keys(document.housing?.faces ?? {})).toHaveLength(6);
       expect(Array.isArray(document.parts)).toBe(true);
-      expect(document.housing.outerM).toHaveLength(3);
+      expect(document.housing?.outerM).toHaveLength(3);
     },
   );
+
+  test('an open assembly stays without a housing, its carriers without a wall', () => {
+    const document = completeDraft({ housing: null, carriers: [{ id: 'plate', kind: 'plate' }] });
+    expect(document.housing).toBeNull();
+    expect(document.carriers?.[0]?.on).toBeNull();
+  });
 
   test('a finished one is left as it is', () => {
     expect(completeDraft(lamp())).toMatchObject(JSON.parse(JSON.stringify(lamp())) as object);

@@ -55,7 +55,9 @@ export function plainBox(
     finishInside: finish,
     loadState: 'free',
   };
-  const faces = Object.fromEntries(faceNames.map((name) => [name, wall])) as NonNullable<AssemblyDocumentInput['housing']>['faces'];
+  const faces = Object.fromEntries(faceNames.map((name) => [name, wall])) as NonNullable<
+    AssemblyDocumentInput['housing']
+  >['faces'];
   return assemblyDocumentSchema.parse({
     format: 'trimwick-assembly/1',
     name: 'Plain box',

@@ -2,7 +2,7 @@ import type { NetworkLink } from '../../../../shared/schemas/network.js';
 import { blankFilmAir, filmAir } from '../../air.js';
 import { gravity } from '../../constants.js';
 import {
-  channelCorrelations,
+  defaultChannel,
   findChannelCorrelation,
   type ChannelCorrelation,
   type ChannelNusselt,
@@ -40,7 +40,7 @@ export function channelFilm(
 }
 
 export function channelLaw(link: Extract<NetworkLink, { kind: 'channel' }>, pressurePa: number): LinkLaw {
-  const law = findChannelCorrelation(link.correlation) ?? (channelCorrelations[0] as ChannelCorrelation);
+  const law = findChannelCorrelation(link.correlation) ?? defaultChannel;
   const channel = channelFilm(law, {
     spacing: link.spacingM,
     height: link.heightM,

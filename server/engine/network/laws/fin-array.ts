@@ -1,5 +1,5 @@
 import type { NetworkLink } from '../../../../shared/schemas/network.js';
-import { channelCorrelations, type ChannelCorrelation } from '../../convection/channel.js';
+import { defaultChannel, type ChannelCorrelation } from '../../convection/channel.js';
 import { blankFilm } from '../../convection/film.js';
 import { channelFilm } from './channel.js';
 import type { LinkLaw } from './law.js';
@@ -25,7 +25,7 @@ export function finSpacing({ baseWidthM, finThicknessM, finCount }: FinArray): n
  * **Checked against** a textbook’s heat sink, tests/reference/bar-cohen-rohsenow-1984.
  */
 export function finArrayLaw(fins: FinArray, pressurePa: number, correlation?: ChannelCorrelation): LinkLaw {
-  const law = correlation ?? (channelCorrelations[0] as ChannelCorrelation);
+  const law = correlation ?? defaultChannel;
   const spacing = finSpacing(fins);
   const channel = channelFilm(law, {
     spacing,
