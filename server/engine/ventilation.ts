@@ -1,6 +1,6 @@
 import { airHeatCapacity, gasConstant } from './air.js';
 import { gravity } from './constants.js';
-import type { FlowOut } from './network/link-laws.js';
+import type { FlowOut } from './network/laws/law.js';
 
 const heatCapacity = { value: 0, slope: 0 };
 

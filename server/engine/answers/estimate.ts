@@ -3,7 +3,7 @@ import type { Estimate } from '../../../shared/schemas/estimate.js';
 import type { DeviceAnswer, Warning } from '../../../shared/schemas/network-answers.js';
 import type { RuleSet } from '../../../shared/schemas/rule-set.js';
 import { compileAssembly } from '../assembly/compile.js';
-import { boxModel } from '../assembly/compile-housing.js';
+import { boxModel } from '../assembly/box.js';
 import { resolveAssembly } from '../assembly/resolve.js';
 import type { ResolvedAssembly } from '../assembly/resolved.js';
 import { EngineError } from '../errors.js';

@@ -1,7 +1,7 @@
 import { faceNames } from '../../../shared/schemas/assembly.js';
 import type { Estimate } from '../../../shared/schemas/estimate.js';
 import type { SolveAnswer } from '../../../shared/schemas/network-answers.js';
-import type { BoxModel } from '../assembly/compile-housing.js';
+import type { BoxModel } from '../assembly/box.js';
 import type { ResolvedAssembly } from '../assembly/resolved.js';
 
 /** What natural convection and radiation together take from a small housing, common practice [W/(m² K)]. */

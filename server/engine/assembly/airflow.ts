@@ -1,6 +1,6 @@
 import { faceNames, type Housing } from '../../../shared/schemas/assembly.js';
 import type { NetworkBuilder } from './builder.js';
-import type { BoxModel } from './compile-housing.js';
+import type { BoxModel } from './box.js';
 import { dot, normalOf, type Vector } from './pose.js';
 import type { ResolvedScenario } from './resolved.js';
 

@@ -1,6 +1,6 @@
 import { cellAirConductivity } from '../conduction/printed-wall.js';
 import type { NetworkBuilder } from './builder.js';
-import { faceLabel, gridOfFace, type BoxModel } from './compile-housing.js';
+import { faceLabel, gridOfFace, type BoxModel } from './box.js';
 import { meetOpenRoom } from './outside.js';
 import { normalOf, slopeExtents, tiltOf } from './pose.js';
 import type { Fins, ResolvedCarrier, ResolvedScenario } from './resolved.js';

@@ -2,7 +2,7 @@ import { faceNames } from '../../../shared/schemas/assembly.js';
 import type { RuleSet, touchSurfaces } from '../../../shared/schemas/rule-set.js';
 import { EngineError } from '../errors.js';
 import type { NetworkBuilder } from './builder.js';
-import { faceLabel, type BoxModel } from './compile-housing.js';
+import { faceLabel, type BoxModel } from './box.js';
 import { compilePartLimits } from './compile-part-limits.js';
 import { isPolymer } from './resolve-housing.js';
 import type { ResolvedAssembly, ResolvedFace } from './resolved.js';

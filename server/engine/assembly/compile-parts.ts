@@ -1,7 +1,7 @@
 import type { NetworkSource } from '../../../shared/schemas/network.js';
 import type { NetworkBuilder } from './builder.js';
 import { carrierLabel, carrierSurfaces, gridOfCarrier } from './compile-carriers.js';
-import { faceLabel, faceSurface, gridOfFace, type BoxModel } from './compile-housing.js';
+import { faceLabel, faceSurface, gridOfFace, type BoxModel } from './box.js';
 import { bodyEmissivity } from './defaults.js';
 import { meetOpenRoom } from './outside.js';
 import type { ResolvedAssembly, ResolvedPart, ResolvedScenario } from './resolved.js';

@@ -1,7 +1,7 @@
 import { faceNames, type FaceName, type Housing } from '../../../shared/schemas/assembly.js';
 import { lookUp } from '../tables.js';
 import type { NetworkBuilder } from './builder.js';
-import type { BoxModel } from './compile-housing.js';
+import type { BoxModel } from './box.js';
 import { normalAxis, opposite } from './geometry.js';
 import { contentOf } from './inline-values.js';
 import { normalOf, tiltOf } from './pose.js';

@@ -1,6 +1,6 @@
 import { faceNames, type FaceName } from '../../../shared/schemas/assembly.js';
 import type { NetworkBuilder } from './builder.js';
-import { faceLabel, faceSurface, type BoxModel } from './compile-housing.js';
+import { faceLabel, faceSurface, type BoxModel } from './box.js';
 import { dot, normalOf, slopeExtents, sunDirection } from './pose.js';
 import type { ResolvedScenario } from './resolved.js';
 import { conductTo, meetAir, radiateTo, type Surface } from './surfaces.js';

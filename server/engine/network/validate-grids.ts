@@ -1,7 +1,7 @@
 import type { NetworkDocument } from '../../../shared/schemas/network.js';
 import type { NetworkGrid } from '../../../shared/schemas/network-grid.js';
 import { findCorrelation, type ConvectionShape } from '../convection/registry.js';
-import type { Findings } from './validate.js';
+import type { Findings } from './findings.js';
 
 /** Slack when positions typed in millimetres are compared [m]. */
 const slack = 1e-9;

@@ -1,8 +1,9 @@
 import type { NetworkDocument, NetworkLink, NetworkNode, NetworkSource } from '../../../shared/schemas/network.js';
 import { channelCorrelations, findChannelCorrelation } from '../convection/channel.js';
 import { correlations, findCorrelation } from '../convection/registry.js';
+import { Findings } from './findings.js';
 import { checkGrids, joinGrids } from './validate-grids.js';
-import { EngineError, type EngineErrorCode, type FieldError } from '../errors.js';
+import { EngineError } from '../errors.js';
 
 /** Name of a link: its id, or `link-3` by position. */
 export function linkName(link: NetworkLink, index: number): string {
@@ -38,14 +39,6 @@ export function carriesHeat(link: NetworkLink): boolean {
       if (link.fanCurve) return !closed && link.fanCurve.some(([flow]) => flow > 0);
       return !closed && (link.heightM ?? 0) > 0;
     }
-  }
-}
-
-export class Findings {
-  readonly list: { code: EngineErrorCode; error: FieldError }[] = [];
-
-  add(code: EngineErrorCode, error: FieldError): void {
-    this.list.push({ code, error });
   }
 }
 
