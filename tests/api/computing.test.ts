@@ -161,3 +161,49 @@ describe('/assemblies/compile', () => {
     }
   });
 });
+
+describe('/correlations', () => {
+  it('lists every correlation with formula, range and source; a network may name each of its shape', async () => {
+    const { status, body } = await viewer.get('/api/v1/correlations');
+    expect(status).toBe(200);
+    const { items, total } = body as {
+      items: { id: string; shape: string; regime: string; source: string }[];
+      total: number;
+    };
+    expect(items).toHaveLength(total);
+    expect(items.map(({ id }) => id)).toEqual(
+      expect.arrayContaining([
+        'raithby-hollands',
+        'churchill-chu',
+        'morgan',
+        'whitaker',
+        'elsherbiny',
+        'hollands',
+        'elenbaas',
+      ]),
+    );
+    for (const { source } of items) expect(source.length).toBeGreaterThan(5);
+    const cylinder = items.filter(({ shape }) => shape === 'horizontal-cylinder');
+    for (const { id } of cylinder) {
+      const solved = await viewer.post('/api/v1/networks/solve', {
+        format: 'trimwick-network/1',
+        nodes: [
+          { id: 'room', fixedC: 20 },
+          { id: 'pipe', heatW: 5 },
+        ],
+        links: [
+          {
+            kind: 'convection',
+            from: 'pipe',
+            to: 'room',
+            shape: 'horizontal-cylinder',
+            areaM2: 0.03,
+            lengthM: 0.02,
+            correlation: id,
+          },
+        ],
+      });
+      expect(solved.status).toBe(200);
+    }
+  });
+});

@@ -55,8 +55,12 @@ describe('an assembly document', () => {
     ['note of 10,000 characters', '/note', 'x'.repeat(10_000)],
     ['note that is a number', '/note', 7],
     ['field that does not exist', '/housing/colour', 'red'],
-    ['moving air, which is not computed', '/scenarios/0/airSpeedMPerS', 3],
-    ['vents, which are not computed', '/housing/faces/top/vents', [{}]],
+    ['air that moves backwards', '/scenarios/0/airSpeedMPerS', -3],
+    ['a vent without an area', '/housing/faces/top/vents', [{}]],
+    ['a vent of no area', '/housing/faces/top/vents', [{ freeAreaM2: 0 }]],
+    ['a tilt beyond level', '/housing/pose/tiltDeg', 120],
+    ['a fault, which is not computed', '/scenarios/0/fault', 'fan-stopped'],
+    ['cut-outs, which are not computed', '/cutOuts', [{ id: 'k1' }]],
     ['another format', '/format', 'trimwick-assembly/9'],
   ])('with %s is refused at %s', async (_, pointer, value) => {
     const answer = await estimate(changed(demoDocument(), pointer, value));
