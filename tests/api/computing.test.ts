@@ -164,9 +164,9 @@ describe('/assemblies/compile', () => {
 
 describe('/correlations', () => {
   it('lists every correlation with formula, range and source; a network may name each of its shape', async () => {
-    const { status, body } = await viewer.get('/api/v1/correlations');
-    expect(status).toBe(200);
-    const { items, total } = body as {
+    const answer = await viewer.get('/api/v1/correlations');
+    expect(answer.status).toBe(200);
+    const { items, total } = answer.body as {
       items: { id: string; shape: string; regime: string; source: string }[];
       total: number;
     };

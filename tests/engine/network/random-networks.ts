@@ -14,7 +14,7 @@ interface LinkSpec {
 }
 
 const linkSpec: fc.Arbitrary<LinkSpec> = fc.record({
-  kind: fc.integer({ min: 0, max: 4 }),
+  kind: fc.integer({ min: 0, max: 8 }),
   a: unit,
   b: unit,
   towards: unit,
@@ -38,16 +38,70 @@ function makeLink(spec: LinkSpec, from: string, to: string, linear: boolean): Li
     case 2:
       return { kind: 'film', from, to, coefficientWPerM2K: 1 + 30 * a, areaM2: 0.001 + 0.02 * b };
     case 3: {
-      const shapes = ['vertical-plate', 'plate-facing-up', 'plate-facing-down'] as const;
+      const shapes = [
+        { shape: 'vertical-plate' },
+        { shape: 'plate-facing-up' },
+        { shape: 'plate-facing-down' },
+        { shape: 'inclined-plate', tiltDeg: 180 * b },
+        { shape: 'horizontal-cylinder' },
+        { shape: 'vertical-cylinder', diameterM: 0.005 + 0.05 * b },
+        { shape: 'sphere' },
+      ] as const;
+      const flows = ['assisting', 'transverse', 'opposing'] as const;
       return {
         kind: 'convection',
         from,
         to,
-        shape: shapes[Math.min(2, Math.floor(3 * a))] ?? 'vertical-plate',
+        ...(shapes[Math.min(6, Math.floor(7 * a))] ?? shapes[0]),
         areaM2: 0.001 + 0.02 * b,
         lengthM: 0.01 + 0.2 * a,
+        // Every second one in moving air, against the natural flow, across it and with it.
+        ...(b < 0.5 ? {} : { airSpeedMPerS: 4 * (b - 0.5), flow: flows[Math.floor(30 * a) % 3] ?? 'transverse' }),
       };
     }
+    case 4:
+      return {
+        kind: 'air-gap',
+        from,
+        to,
+        areaM2: 0.001 + 0.02 * b,
+        gapM: 0.004 + 0.03 * a,
+        heightM: 0.05 + 0.5 * b,
+        tiltDeg: 180 * a,
+      };
+    case 5:
+      return {
+        kind: 'channel',
+        from,
+        to,
+        areaM2: 0.002 + 0.04 * b,
+        spacingM: 0.003 + 0.02 * a,
+        heightM: 0.03 + 0.2 * b,
+      };
+    case 6:
+      return {
+        kind: 'fin-array',
+        from,
+        to,
+        baseWidthM: 0.05 + 0.1 * a,
+        baseHeightM: 0.03 + 0.15 * b,
+        finHeightM: 0.01 + 0.04 * a,
+        finThicknessM: 0.0005 + 0.001 * b,
+        finCount: 4 + Math.floor(10 * b),
+        conductivityWPerMK: 1 + 200 * a,
+        tiltDeg: 45 * b,
+      };
+    case 7:
+      return b < 0.5
+        ? { kind: 'ventilation', from, to, flowM3PerS: 1e-5 + 2e-3 * a }
+        : {
+            kind: 'ventilation',
+            from,
+            to,
+            inletAreaM2: 1e-5 + 5e-4 * a,
+            outletAreaM2: 2e-4 * b,
+            heightM: 0.02 + 0.2 * a,
+          };
     default:
       return { kind: 'radiation', from, to, areaM2: 0.001 + 0.02 * b, emissivity: 0.05 + 0.95 * a };
   }

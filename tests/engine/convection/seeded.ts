@@ -1,0 +1,8 @@
+/** Even random numbers from 0 to 1, the same for the same seed (a linear congruence). */
+export function seeded(seed: number): () => number {
+  let state = seed >>> 0;
+  return () => {
+    state = (Math.imul(state, 1664525) + 1013904223) >>> 0;
+    return state / 2 ** 32;
+  };
+}
