@@ -118,7 +118,13 @@ export const estimateSchema = z
     guardedCeiling: ceilingAnswerSchema,
     paths: z.array(heatPathSchema),
     heatBalance: heatBalanceSchema,
-    handCheck: z.object({ text: z.string(), riseK: z.number(), networkRiseK: z.number() }),
+    handCheck: z.object({
+      text: z.string(),
+      riseK: z.number(),
+      networkRiseK: z.number(),
+      /** The same for the spot that stands out most from what it lies on. */
+      spreading: z.object({ text: z.string(), riseK: z.number(), networkRiseK: z.number() }).optional(),
+    }),
     warnings: z.array(warningSchema),
     assumed: z.array(assumedSchema),
     engineVersion: z.string(),

@@ -16,7 +16,8 @@ function places(grid: NetworkGrid) {
   const readings = new Set(grid.readings.map(({ id }) => id));
   const mean = `${grid.id}.mean`;
   // A wall is followed from the mean under what lies on it to the mean of its outside; a carrier by its mean alone.
-  if (readings.has(mean)) return { entry: () => mean, near: mean, far: mean };
+  const isWall = grid.free.near !== undefined;
+  if (!isWall && readings.has(mean)) return { entry: () => mean, near: mean, far: mean };
   const inner = grid.free.near ?? grid.id;
   const outer = grid.free.far ?? grid.id;
   const under = (what: string) => `${grid.id}.mean.${what}`;

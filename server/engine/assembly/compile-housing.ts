@@ -60,6 +60,12 @@ function compileWall(builder: NetworkBuilder, box: BoxModel, name: FaceName): vo
   });
   builder.reading(
     gridOfFace(name),
+    { id: `face.${name}.mean`, side: 'near', what: 'mean' },
+    'face',
+    `${faceLabel(name)}, inside, mean of all`,
+  );
+  builder.reading(
+    gridOfFace(name),
     { id: `face.${name}.hotSpot`, side: 'far', what: 'peak' },
     'spot',
     `${faceLabel(name)}, outside, hottest spot`,

@@ -31,8 +31,8 @@ export interface SteadyState {
 function heatScale(network: PreparedNetwork): number {
   const { residual, rows, size } = network;
   const { heat } = network.sources;
-  // A picowatt is as near as anyone can ask.
-  let scale = 0.1;
+  // A tenth of a picowatt is as near as anyone can ask.
+  let scale = 0.01;
   for (let n = 0; n < size; n++) scale += Math.abs(heat[n] as number);
   for (let n = rows; n < size; n++) scale += Math.abs(residual[n] as number);
   return scale;
@@ -218,7 +218,7 @@ function newton(network: PreparedNetwork, { base, step, weight, last }: Workspac
       network.temperatures.set(base);
       network.evaluate();
       // No step makes it better, and the step says that the answer lies within the tolerance: rounding is all that is left.
-      if (largest <= stepTolerance * looser) return iteration;
+      if (largest <= stepTolerance * looser || excess(network, 100 * looser) <= 1) return iteration;
       if (!reuse) return -1;
       network.factored = false;
       ratio = 1;

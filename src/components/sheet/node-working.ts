@@ -26,6 +26,8 @@ export interface NodeWorking {
   fixed: boolean;
   sources: { words: string; heatW: number }[];
   rows: WorkingRow[];
+  /** Where the node is read from cells: the place whose balance is shown in its stead. */
+  balanceOf: string | null;
   inW: number;
   outW: number;
 }
@@ -251,8 +253,35 @@ function gridRows(
   });
 }
 
+/** The place whose balance stands for a reading: the mean of its plate or board, or of its side of a wall. */
+function placeOfReading(estimate: Estimate, node: string): string | null {
+  const grid = estimate.network.grids.find(({ readings }) => readings.some(({ id }) => id === node));
+  const reading = grid?.readings.find(({ id }) => id === node);
+  if (!grid || !reading) return null;
+  const { near, far } = grid.free;
+  const mean = `${grid.id}.mean`;
+  const under = `${mean}.${node.slice(node.lastIndexOf('.') + 1)}`;
+  const place =
+    near === undefined
+      ? mean
+      : reading.side === 'near' && grid.readings.some(({ id }) => id === under)
+        ? under
+        : (far ?? near);
+  return place === node ? null : place;
+}
+
 /** The working of a node’s temperature; `null` when the estimate has no such node. */
 export function nodeWorking(estimate: Estimate, node: string): NodeWorking | null {
+  const place = placeOfReading(estimate, node);
+  const own = balanceAt(estimate, node);
+  if (own === null || place === null || own.rows.length > 0) return own;
+  const balance = balanceAt(estimate, place);
+  if (balance === null) return own;
+  const { node: id, label, temperatureC, secondC } = own;
+  return { ...balance, node: id, label, temperatureC, secondC, balanceOf: balance.label };
+}
+
+function balanceAt(estimate: Estimate, node: string): NodeWorking | null {
   const byId = new Map(estimate.nodes.map((entry) => [entry.id, entry]));
   const self = byId.get(node);
   if (!self) return null;
@@ -298,6 +327,7 @@ export function nodeWorking(estimate: Estimate, node: string): NodeWorking | nul
     fixed: estimate.network.nodes.find(({ id }) => id === node)?.fixedC !== undefined,
     sources,
     rows,
+    balanceOf: null,
     inW,
     outW: rows.reduce((sum, { outW }) => sum + Math.max(outW, 0), 0),
   };

@@ -30,6 +30,13 @@ describe('the working of a temperature', () => {
     }
   });
 
+  test('of a hottest spot is the balance of what it is read from', () => {
+    const spot = nodeWorking(estimate, 'face.top.hotSpot');
+    expect(spot?.balanceOf).toBe(estimate.nodes.find(({ id }) => id === 'face.top.outer')?.label);
+    expect(spot?.rows.length).toBeGreaterThan(1);
+    expect(nodeWorking(estimate, 'carrier.plate.peak.left')?.balanceOf).toBe('Plate, mean');
+  });
+
   test('names the law and its inputs for each way of the heat', () => {
     const working = nodeWorking(estimate, 'face.top.outer');
     const laws = working?.rows.map(({ law }) => law) ?? [];

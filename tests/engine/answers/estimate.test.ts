@@ -62,6 +62,13 @@ describe('An estimate of the lamp', () => {
     expect(estimate.devices['part.left.junction']?.currentA).toBeCloseTo(0.1, 6);
   });
 
+  it('has a hand check of its hottest spot, near what the cells say', () => {
+    const { spreading } = estimate.handCheck;
+    expect(spreading?.text).toContain('Lee, Song, Au & Moran');
+    expect(spreading?.riseK).toBeGreaterThan(0.3 * (spreading?.networkRiseK ?? NaN));
+    expect(spreading?.riseK).toBeLessThan(3 * (spreading?.networkRiseK ?? NaN));
+  });
+
   it('has a guarded ceiling below the nominal one', () => {
     const { nominalCeiling, guardedCeiling } = estimate.verdict;
     expect(guardedCeiling).not.toBeNull();

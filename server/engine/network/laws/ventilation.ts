@@ -1,6 +1,6 @@
 import type { NetworkLink } from '../../../../shared/schemas/network.js';
 import { gasConstant } from '../../air.js';
-import { buoyantFlow, carriedHeat, fanFlow, openingsInSeries } from '../../ventilation.js';
+import { buoyantFlow, carriedHeat, closedFanCurve, fanFlow, openingsInSeries } from '../../ventilation.js';
 import { linear, type LinkLaw } from './law.js';
 
 type Ventilation = Extract<NetworkLink, { kind: 'ventilation' }>;
@@ -30,8 +30,8 @@ export function ventilationLaw(link: Ventilation, pressurePa: number): LinkLaw {
   }
   const area = effectiveArea(link);
   if (area === 0) return linear(0);
-  const { fanCurve } = link;
-  if (fanCurve) {
+  if (link.fanCurve) {
+    const fanCurve = closedFanCurve(link.fanCurve);
     const working = { value: 0, byLogDensity: 0 };
     return {
       evaluate: (from, to, out) => {
