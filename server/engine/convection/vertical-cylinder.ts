@@ -9,8 +9,8 @@ const rounding = 0.05;
 /**
  * Natural convection of a vertical cylinder’s side: the plate of its height, enhanced by its curvature.
  *
- * Nu = Nu_plate ζ/ln(1 + ζ), ζ = 1.8 (L/D)/Nu_T, Nu_T = C̄_l Ra^¼; L = height. In ζ, Nu_T stands as √(Nu_T² + 0.05²), which changes nothing
- * above Nu_T = 0.5.
+ * Nu = Nu_plate ζ/ln(1 + ζ), ζ = 1.8 (L/D)/Nu_T, Nu_T = C̄_l Ra^¼; L = height. In ζ, Nu_T stands as √(Nu_T² + 0.05²), which changes it
+ * by less than 0.5 % above Nu_T = 0.5.
  *
  * @param ratio L/D
  *

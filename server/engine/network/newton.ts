@@ -9,7 +9,13 @@ const coldest = 20;
 const largestStep = 150;
 const mostIterations = 80;
 const mostHalvings = 10;
+/** Iterations after which temperatures far above the hottest are taken for a runaway. */
+const patience = 5;
+/** In networks of so many unknowns a state on the way to an answer gets no second try. */
+const large = 1000;
 const mostTransientSteps = 400;
+/** Unknowns times steps that the fallback may take. */
+const transientBudget = 3e5;
 /** A solution’s last step [K], and its largest residual as a share of the heat that flows. */
 const stepTolerance = 1e-10;
 const residualTolerance = 1e-11;
@@ -88,6 +94,15 @@ function solveForStep(network: PreparedNetwork, step: Float64Array): void {
   for (let i = 0; i < unknownCount; i++) step[i] = residual[i] as number;
   for (let i = unknownCount; i < rows; i++) step[i] = 0;
   network.matrix.solve(step);
+}
+
+function hottestOf({ temperatures, unknownCount }: PreparedNetwork): number {
+  let highest = 0;
+  for (let i = 0; i < unknownCount; i++) {
+    const t = temperatures[i] as number;
+    if (t > highest) highest = t;
+  }
+  return highest;
 }
 
 /** Moves the unknown temperatures by −scale × step from `base`, fenced off from 0 K. */
@@ -225,6 +240,7 @@ function newton(network: PreparedNetwork, { base, step, weight, last }: Workspac
       continue;
     }
     done = excess(network, looser) <= 1;
+    if (!done && iteration >= patience && largest > 1 && hottestOf(network) > 1.3 * hottest) return -1;
     ratio = largest / lastLargest;
     if (done && scale === 1 && iteration > 1 && foretoldStep(step, last, !reuse) <= stepTolerance * looser)
       return iteration;
@@ -244,7 +260,9 @@ function transient(network: PreparedNetwork, { base, step }: Workspace): number 
   let pace = 0;
   for (let i = 0; i < unknownCount; i++) pace = Math.max(pace, network.stiffness[i] as number);
   pace = Math.max(pace, 1e-9);
-  for (let steps = 1; steps <= mostTransientSteps; steps++) {
+  // In a large network each step is dear: what has not come near its state by then is refused.
+  const most = Math.min(mostTransientSteps, Math.max(30, Math.ceil(transientBudget / unknownCount)));
+  for (let steps = 1; steps <= most; steps++) {
     const before = norm(network.residual, unknownCount);
     base.set(network.temperatures);
     const { diagonal } = network.matrix;
@@ -322,6 +340,9 @@ export function solveSteady(network: PreparedNetwork, looser = 1): SteadyState {
   if (iterations > 0 && isStable(network)) {
     refuseTooHot(network);
     return { iterations, stable: true };
+  }
+  if (iterations <= 0 && looser > 1 && network.unknownCount >= large) {
+    throw new EngineError('not-converged', 'No steady state was found on the way');
   }
   const found = iterations > 0;
   const spent = Math.max(iterations, 0);

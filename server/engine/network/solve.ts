@@ -43,21 +43,37 @@ function scaleAll(network: PreparedNetwork, share: number): void {
   }
 }
 
-/** The largest share of the present drives at which there still is a steady state, to a part in a thousand. */
+/** Bisections of the search for the highest drive: in a large network fewer, so that a refusal comes soon. */
+const bisections = { small: 10, large: 4, largeFrom: 1000 };
+const mostHalvings = 30;
+/** How much less exactly the states on the way are solved. */
+const onTheWay = 1e5;
+
+/** A share of the present drives at which there still is a steady state, near the largest: halved until there is one, then bisected. */
 function highestShare(network: PreparedNetwork): number {
-  let holds = 0;
-  let fails = 1;
-  for (let step = 0; step < 12; step++) {
-    const share = (holds + fails) / 2;
+  const holdsAt = (share: number): boolean => {
     scaleAll(network, share);
     firstGuess(network);
     try {
-      solveSteady(network);
-      holds = share;
+      solveSteady(network, onTheWay);
+      return true;
     } catch (error) {
-      if (!(error instanceof EngineError)) throw error;
-      fails = share;
+      if (error instanceof EngineError) return false;
+      throw error;
     }
+  };
+  let fails = 1;
+  let holds = 0;
+  for (let i = 0; i < mostHalvings && holds === 0; i++) {
+    if (holdsAt(fails / 2)) holds = fails / 2;
+    else fails /= 2;
+  }
+  if (holds === 0) return 0;
+  const steps = network.unknownCount < bisections.largeFrom ? bisections.small : bisections.large;
+  for (let step = 0; step < steps; step++) {
+    const share = (holds + fails) / 2;
+    if (holdsAt(share)) holds = share;
+    else fails = share;
   }
   return holds;
 }
@@ -103,7 +119,7 @@ export function solveNetwork(document: NetworkDocument, options: SolveOptions = 
 
 function withHighestDrive(error: EngineError, network: PreparedNetwork): EngineError {
   const share = highestShare(network);
-  const message = `${error.message}; it has one up to ${(100 * share).toFixed(1)} % of it`;
+  const message = `${error.message}; it has one up to ${(100 * share).toPrecision(3)} % of it`;
   return new EngineError(
     'runaway',
     message,
