@@ -11,7 +11,7 @@ import { boxModel, faceSurface, type BoxModel } from './box.js';
 import { compileHousing } from './compile-housing.js';
 import { compileLimits } from './compile-limits.js';
 import { compileParts } from './compile-parts.js';
-import { bury, conductThroughFill, meetInsideAir, openSurface } from './fill.js';
+import { bury, conductThroughFill, fillsAll, meetInsideAir, openSurface } from './fill.js';
 import { compileLeads } from './leads.js';
 import { compileRoom, compileSun } from './outside.js';
 import type { ResolvedAssembly, ResolvedScenario } from './resolved.js';
@@ -52,7 +52,9 @@ function compileInside(
   const { fill } = (box.assembly.box as NonNullable<ResolvedAssembly['box']>).housing;
   const insides = [...faceInsides(box, scenario), ...parts];
   const [x, y, z] = box.innerM;
-  if (fill.kind !== 'foam') {
+  // A fill up to the opposite wall leaves no air.
+  const airy = fill.kind === 'air' || (fill.kind === 'potting' && !fillsAll(box, fill));
+  if (airy) {
     builder.node('air.inside', 'air', 'Air inside', { capacityJPerK: airCapacityPerM3 * x * y * z });
     builder.node('radiant.inside', 'air', 'Mean radiant temperature inside');
   }
@@ -60,12 +62,12 @@ function compileInside(
   else {
     const buried = bury(insides, box.assembly, box, fill);
     conductThroughFill(builder, buried, box, fill, scenario);
-    if (fill.kind === 'potting') {
+    if (airy && fill.kind === 'potting') {
       const open = builder.has('fill.surface') ? [openSurface(box, fill.onFace, scenario)] : [];
       meetInsideAir(builder, [...buried, ...open]);
     }
   }
-  if (fill.kind !== 'foam') compileAirExchange(builder, box, scenario);
+  if (airy) compileAirExchange(builder, box, scenario);
 }
 
 /**

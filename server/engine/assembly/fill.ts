@@ -16,6 +16,11 @@ function depthOf(fill: Solid, box: BoxModel): number {
   return fill.kind === 'foam' ? Infinity : Math.min(fill.heightM, box.innerM[normalAxis[fill.onFace]]);
 }
 
+/** True where potting reaches the wall opposite to the one that it was poured on. */
+export function fillsAll(box: BoxModel, fill: Extract<Solid, { kind: 'potting' }>): boolean {
+  return fill.heightM >= box.innerM[normalAxis[fill.onFace]] - 1e-6;
+}
+
 /** Share of a length that lies below the surface of the fill, from `from` to `to` over the face that it was poured on. */
 function shareBelow(depth: number, from: number, to: number): number {
   if (depth <= from) return 0;
@@ -99,7 +104,7 @@ export function conductThroughFill(
       : (k * Math.sqrt(2 * Math.PI * area) * share) / Math.max(surface.areaM2, 1e-9);
     conductTo(builder, surface, 'fill.inside', coefficient, `${surface.id}.fill`);
   }
-  if (fill.kind === 'foam' || depth >= box.innerM[axis] - 1e-6) return;
+  if (fill.kind === 'foam' || fillsAll(box, fill)) return;
   // The open surface of the potting meets the air above it.
   const open = openSurface(box, base, scenario);
   builder.node('fill.surface', 'air', 'Potting, its open surface');

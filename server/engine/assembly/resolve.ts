@@ -63,6 +63,19 @@ function checkAir(housing: Housing): FieldError[] {
   return errors;
 }
 
+/** Whether any heat can leave at all. */
+function checkWayOut(document: AssemblyDocument, housing: Housing): FieldError[] {
+  const closed = faceNames.every((name) => {
+    const { exposure } = housing.faces[name];
+    return exposure.kind === 'against-wall' && exposure.surfaceC === null;
+  });
+  const cooled = document.leads.length > 0 || document.carriers.some(({ kind }) => kind === 'fins');
+  if (!closed || cooled) return [];
+  const message =
+    'All six faces are held against something that takes no heat: leave one open, or give it a temperature';
+  return faceNames.map((name) => ({ path: `/housing/faces/${name}/exposure/kind`, message }));
+}
+
 function resolveDrive(document: AssemblyDocument, parts: readonly ResolvedPart[]): ResolvedAssembly['drive'] {
   if (document.drive !== null) return document.drive;
   const first = document.supplies.find((supply) => parts.some((part) => part.supply === supply.id));
@@ -115,7 +128,8 @@ export function resolveAssembly(document: AssemblyDocument, typical?: ReadonlySe
   const assumptions = new Assumptions(typical);
   const { housing } = document;
   const faces = resolveFaces(document, assumptions);
-  if (housing && faces) refuse([...checkWalls(housing, faces), ...checkAir(housing)]);
+  if (housing && faces)
+    refuse([...checkWalls(housing, faces), ...checkAir(housing), ...checkWayOut(document, housing)]);
   const { carriers, errors: carrierErrors } = resolveCarriers(document, faces, assumptions);
   const { parts, errors: partErrors } = resolveParts(document, faces, carriers, assumptions);
   const { leads, errors: leadErrors } = resolveLeads(document, parts);

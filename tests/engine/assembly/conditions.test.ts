@@ -93,6 +93,11 @@ describe('What a face meets', () => {
     expect(order).toEqual([...order].sort((a, b) => a - b));
   });
 
+  it('nothing that takes heat, on all six sides, is refused at the faces', () => {
+    const held = { ...printedWall, exposure: { kind: 'against-wall' as const } };
+    expect(refusal(housed({ faces: sixWalls(held) }))).toHaveLength(6);
+  });
+
   it('a hot surface nearby warms it', () => {
     expect(exposed({ kind: 'near', surfaceC: 80 })).toBeGreaterThan(plain + 3);
     expect(exposed({ kind: 'near', surfaceC: 25 })).toBeCloseTo(plain, 6);
@@ -201,6 +206,12 @@ describe('A fill', () => {
     const at = (heightM: number) =>
       solved(box({ kind: 'potting', material: filling(0.8), heightM })).at('part.heater.junction');
     expect(at(0.03)).toBeLessThan(at(0.004));
+  });
+
+  it('may reach the other wall: then there is no air inside', () => {
+    const full = solved(box({ kind: 'potting', material: filling(0.8), heightM: 0.06 }));
+    expect(full.at('part.heater.junction')).toBeGreaterThan(25);
+    expect(full.at('air.inside')).toBeNaN();
   });
 
   it('of foam insulates: the part is hotter than in potting', () => {

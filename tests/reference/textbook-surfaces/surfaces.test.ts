@@ -38,14 +38,16 @@ describe('A horizontal pipe of 0.1 m at 165 °C in air of 23 °C', () => {
     { ...ends, id: 'walls', kind: 'radiation', areaM2: Math.PI * 0.1, emissivity: 0.85 },
   ]);
 
-  it('loses by convection with h = 7.38 W/(m² K)', () => {
-    // Ra = 5.07·10⁶, Nu = 23.3, k = 0.0313: 7.29; the book prints 7.38.
-    expect(Math.abs((filmCoefficientsWPerM2K.air ?? 0) / 7.38 - 1)).toBeLessThan(0.03);
+  it('loses by convection with h = 7.29 W/(m² K)', () => {
+    // Printed: Ra = 5.073·10⁶, Nu = 23.3, k = 0.0313 W/(m K), so h = 7.29. The book reads its properties at 365 K, rounded.
+    expect(Math.abs((filmCoefficientsWPerM2K.air ?? 0) / 7.29 - 1)).toBeLessThan(0.02);
   });
 
-  it('and in all 770 W for each metre, 441 W of it by radiation', () => {
-    expect(Math.abs((flowsW.walls ?? 0) / 441 - 1)).toBeLessThan(0.01);
-    expect(Math.abs(((flowsW.walls ?? 0) + (flowsW.air ?? 0)) / 770 - 1)).toBeLessThan(0.02);
+  it('and in all 766 W for each metre: 325 W to the air, 441 W to the walls', () => {
+    expect(Math.abs((flowsW.air ?? 0) / 325 - 1)).toBeLessThan(0.02);
+    // Radiation needs no property of air; the book rounds 438 K, 296 K and σ.
+    expect(Math.abs((flowsW.walls ?? 0) / 441 - 1)).toBeLessThan(0.004);
+    expect(Math.abs(((flowsW.walls ?? 0) + (flowsW.air ?? 0)) / 766 - 1)).toBeLessThan(0.01);
   });
 });
 
