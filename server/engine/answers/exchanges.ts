@@ -1,4 +1,4 @@
-import { edgeFlowId, edgeJoinFlowId } from '../network/prepared.js';
+import { edgeFlowId, edgeJoinFlowId } from '../network/grid-names.js';
 import type { NetworkDocument } from '../../../shared/schemas/network.js';
 import type { NetworkGrid } from '../../../shared/schemas/network-grid.js';
 import type { SolveAnswer } from '../../../shared/schemas/network-answers.js';

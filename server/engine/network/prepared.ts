@@ -4,6 +4,7 @@ import { zeroCelsius } from '../constants.js';
 import { CellFilm } from './cell-films.js';
 import { GeneralLinks } from './general-links.js';
 import { freeCells, intervals, overlaps, placeGrids, rectangleCells, shares, type PlacedGrid } from './grid-block.js';
+import { bringsFilm, edgeFlowId, edgeJoinFlowId } from './grid-names.js';
 import { LinearLinks, RadiativeLinks, type System } from './link-arrays.js';
 import { linkLaw, surfaceLaw } from './link-laws.js';
 import { Pairs } from './pairs.js';
@@ -26,23 +27,6 @@ interface Reading {
 type SurfacePlace =
   | { kind: 'film'; film: CellFilm }
   | { kind: 'linear' | 'radiative'; from: number; to: number; areaM2: number; coefficient: number };
-
-/** Name under which the flow over an edge to a node is reported. */
-export function edgeFlowId(grid: string, index: number, half: 'near' | 'far'): string {
-  return `${grid}.edge.${String(index + 1)}.${half}`;
-}
-
-/** Name under which the flow over an edge into another grid is reported. */
-export function edgeJoinFlowId(grid: string, index: number): string {
-  return `${grid}.edge-join.${String(index + 1)}`;
-}
-
-/** Surfaces whose law gives one film coefficient for all their cells. */
-type FilmSurface = Exclude<GridSurface, { kind: 'radiation' | 'film' }>;
-
-function bringsFilm(surface: GridSurface): surface is FilmSurface {
-  return surface.kind !== 'radiation' && surface.kind !== 'film';
-}
 
 /**
  * A network ready to be solved, and solved again with other drives: structure, order and workspace are made once; `evaluate` allocates
