@@ -44,7 +44,7 @@ export interface SpreadingAnswer {
  * **Source** S. Lee, S. Song, V. Au, K. P. Moran, “Constriction/spreading resistance model for electronics
  * packaging”, ASME/JSME Thermal Engineering Conf. 4 (1995) 199–206; recalled, to be verified.
  * **Checked against** its own limits, peak 1/(π k a) and mean 1/(2 √π k a) on a thick body, and zero for a source as large as the
- * plate, tests/engine/conduction.
+ * plate, tests/reference/lee-song-au-moran-1995.
  */
 export function spreadingLeeSongAuMoran(input: SpreadingInput): SpreadingAnswer {
   const a = Math.sqrt(input.sourceArea / Math.PI);

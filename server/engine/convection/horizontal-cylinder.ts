@@ -17,7 +17,7 @@ const coefficient = ofPrandtl((pr, out) => {
  *
  * **Valid for** 10⁻⁵ ≤ Ra ≤ 10¹², all Pr.
  * **Source** S. W. Churchill, H. H. S. Chu, Int. J. Heat Mass Transfer 18 (1975) 1049–1053.
- * **Checked against** a second computation and a textbook’s horizontal pipe, tests/reference/churchill-chu-1975.
+ * **Checked against** a second computation, tests/reference/churchill-chu-1975, and textbooks’ horizontal pipes, tests/reference/textbook-surfaces.
  */
 export function nusseltHorizontalCylinderChurchillChu(ra: number, pr: number, out: Nusselt): void {
   coefficient(pr, psi);

@@ -9,6 +9,7 @@ export interface MixedFilm {
  * Forced and natural convection together, helping each other or crossing: h³ = h_F³ + h_N³.
  *
  * **Source** S. W. Churchill’s cube rule, as given in textbooks; recalled, to be verified.
+ * **Checked against** a hand calculation, tests/engine/convection.
  */
 export function mixedAssisting(forced: number, natural: number, out: MixedFilm): void {
   const cubes = forced ** 3 + natural ** 3;
