@@ -39,40 +39,48 @@ export function outsideText(symbol: string, value: number, range: readonly [numb
   return [`${symbol} = ${value.toExponential(1)} lies outside the published range ${published} of ${of}`];
 }
 
+/** Room for the properties and the Nusselt number of the law that is being evaluated: used up before any other is. */
+const air = blankFilmAir();
+const nusselt: Nusselt = { nu: 0, byLogRa: 0, byPr: 0 };
+
 /** Natural convection by one law for the warmer and one for the colder surface: h = Nu(Ra, Pr) k/L at film temperature. */
-function plain(
-  hot: Correlation,
-  cold: Correlation,
-  options: { length: number; pressure: number; gravityShare?: number; ratio?: number | undefined },
-): FilmLaw {
-  const { length, pressure, ratio } = options;
-  const strength = gravity * (options.gravityShare ?? 1);
-  const cubed = length ** 3;
-  const air = blankFilmAir();
-  const nusselt: Nusselt = { nu: 0, byLogRa: 0, byPr: 0 };
-  return {
-    evaluate: (surface, ambient, out) => {
-      const difference = surface - ambient;
-      filmAir((surface + ambient) / 2, pressure, strength, air);
-      const ra = air.rayleighFactor * Math.abs(difference) * cubed;
-      (difference >= 0 ? hot : cold).evaluate(ra, air.prandtl, nusselt, ratio);
-      const perNu = air.conductivity / length;
-      out.film = nusselt.nu * perNu;
-      out.byLogDifference = perNu * nusselt.byLogRa;
-      const byFilm =
-        perNu * (nusselt.byLogRa * air.rayleighSlope + nusselt.byPr * air.prandtlSlope) +
-        out.film * air.conductivitySlope;
-      out.bySurface = byFilm / 2;
-      out.byAir = byFilm / 2;
-    },
-    outside: (surface, ambient) => {
-      const law = surface >= ambient ? hot : cold;
-      if (!law.range.ra || Math.abs(surface - ambient) < negligible) return [];
-      filmAir((surface + ambient) / 2, pressure, strength, air);
-      const ra = air.rayleighFactor * Math.abs(surface - ambient) * cubed;
-      return outsideText('Ra', ra, law.range.ra, `${law.id} (${law.shape})`);
-    },
-  };
+class NaturalFilm implements FilmLaw {
+  private readonly cubed: number;
+
+  /** @param strength gravity along the surface [m/s²]; @param ratio length ÷ diameter, where the shape has one */
+  constructor(
+    private readonly hot: Correlation,
+    private readonly cold: Correlation,
+    private readonly length: number,
+    private readonly pressure: number,
+    private readonly strength: number,
+    private readonly ratio: number | undefined,
+  ) {
+    this.cubed = length ** 3;
+  }
+
+  evaluate(surface: number, ambient: number, out: FilmOut): void {
+    const difference = surface - ambient;
+    filmAir((surface + ambient) / 2, this.pressure, this.strength, air);
+    const ra = air.rayleighFactor * Math.abs(difference) * this.cubed;
+    (difference >= 0 ? this.hot : this.cold).evaluate(ra, air.prandtl, nusselt, this.ratio);
+    const perNu = air.conductivity / this.length;
+    out.film = nusselt.nu * perNu;
+    out.byLogDifference = perNu * nusselt.byLogRa;
+    const byFilm =
+      perNu * (nusselt.byLogRa * air.rayleighSlope + nusselt.byPr * air.prandtlSlope) +
+      out.film * air.conductivitySlope;
+    out.bySurface = byFilm / 2;
+    out.byAir = byFilm / 2;
+  }
+
+  outside(surface: number, ambient: number): string[] {
+    const law = surface >= ambient ? this.hot : this.cold;
+    if (!law.range.ra || Math.abs(surface - ambient) < negligible) return [];
+    filmAir((surface + ambient) / 2, this.pressure, this.strength, air);
+    const ra = air.rayleighFactor * Math.abs(surface - ambient) * this.cubed;
+    return outsideText('Ra', ra, law.range.ra, `${law.id} (${law.shape})`);
+  }
 }
 
 /** (h_a^n + h_b^n)^(1/n) of two laws. */
@@ -182,8 +190,8 @@ function together(f: FilmLaw, n: FilmLaw, flow: (typeof convectionFlows)[number]
 export interface ConvectiveSurface {
   shape: ConvectionShape;
   lengthM: number;
-  /** Width across the slope, for an inclined plate. */
-  widthM: number;
+  /** Width across the slope, for an inclined plate; without it as wide as long. */
+  widthM?: number | undefined;
   tiltDeg?: number | undefined;
   diameterM?: number | undefined;
   airSpeedMPerS?: number | undefined;
@@ -198,7 +206,7 @@ function naturalLaw(surface: ConvectiveSurface, pressure: number): FilmLaw {
   const hot = findCorrelation(shape, surface.correlation);
   if (!hot) throw new RangeError(`No correlation for ${shape}`);
   const ratio = surface.diameterM === undefined ? undefined : lengthM / surface.diameterM;
-  return plain(hot, coldCorrelation(shape, hot), { length: lengthM, pressure, ratio });
+  return new NaturalFilm(hot, coldCorrelation(shape, hot), lengthM, pressure, gravity, ratio);
 }
 
 /** Sharpness of the blend of an inclined plate’s two laws. */
@@ -210,18 +218,21 @@ const inclinedPower = 10;
  *
  * **Source** after Raithby & Hollands, Handbook of Heat Transfer, ch. 4 (the greatest of the laws); the blend is ours.
  */
-function inclined({ tiltDeg = 90, lengthM, widthM }: ConvectiveSurface, pressure: number): FilmLaw {
+function inclined({ tiltDeg = 90, lengthM, widthM = lengthM }: ConvectiveSurface, pressure: number): FilmLaw {
   const theta = (Math.abs(90 - tiltDeg) * Math.PI) / 180;
   const vertical = findCorrelation('vertical-plate', undefined) as Correlation;
   const shape = tiltDeg < 90 ? ('plate-facing-up' as const) : ('plate-facing-down' as const);
   const level = findCorrelation(shape, undefined) as Correlation;
-  const alongWall = plain(vertical, vertical, { length: lengthM, pressure, gravityShare: Math.cos(theta) });
+  const alongWall = new NaturalFilm(vertical, vertical, lengthM, pressure, gravity * Math.cos(theta), undefined);
   if (theta < 1e-9) return alongWall;
-  const across = plain(level, coldCorrelation(shape, level), {
-    length: (lengthM * widthM) / (2 * (lengthM + widthM)),
+  const across = new NaturalFilm(
+    level,
+    coldCorrelation(shape, level),
+    (lengthM * widthM) / (2 * (lengthM + widthM)),
     pressure,
-    gravityShare: Math.sin(theta),
-  });
+    gravity * Math.sin(theta),
+    undefined,
+  );
   if (Math.cos(theta) < 1e-9) return across;
   return greaterOf(alongWall, across, inclinedPower);
 }

@@ -4,7 +4,7 @@ import type { ConvectionShape } from '../convection/registry.js';
 import { airGapLaw } from './laws/air-gap.js';
 import { channelLaw } from './laws/channel.js';
 import { conductionLaw } from './laws/conduction.js';
-import { convectionLaw, linkSurface } from './laws/convection.js';
+import { convectionLaw, linkConvectionLaw } from './laws/convection.js';
 import { finArrayLaw } from './laws/fin-array.js';
 import { linear, type FlowOut, type LinkLaw } from './laws/law.js';
 import { radiationLaw } from './laws/radiation.js';
@@ -26,7 +26,7 @@ export function linkLaw(link: NetworkLink, { pressurePa }: Surrounding): LinkLaw
     case 'conduction':
       return conductionLaw(link);
     case 'convection':
-      return convectionLaw(linkSurface(link), pressurePa);
+      return linkConvectionLaw(link, pressurePa);
     case 'radiation':
       return radiationLaw(link);
     case 'ventilation':
@@ -47,15 +47,7 @@ export function surfaceLaw(
 ): LinkLaw {
   switch (surface.kind) {
     case 'convection':
-      return convectionLaw(
-        {
-          ...surface,
-          shape: surface.shape as ConvectionShape,
-          widthM: surface.widthM ?? surface.lengthM,
-          areaM2: 1,
-        },
-        pressurePa,
-      );
+      return convectionLaw({ ...surface, shape: surface.shape as ConvectionShape }, 1, surface.scale, pressurePa);
     case 'air-gap':
       return airGapLaw({ ...surface, areaM2: 1 }, pressurePa);
     case 'fin-array':
@@ -66,7 +58,7 @@ export function surfaceLaw(
 /** A law of a whole area as one of a square metre, its film coefficient q/(A ΔT). */
 function perSquareMetre(law: LinkLaw, areaM2: number): LinkLaw {
   return {
-    ...law,
+    hasFilm: true,
     evaluate: (from, to, out) => {
       law.evaluate(from, to, out);
       out.flow /= areaM2;
@@ -75,5 +67,6 @@ function perSquareMetre(law: LinkLaw, areaM2: number): LinkLaw {
       out.film = out.flow / (from - to);
     },
     guess: (temperature) => law.guess(temperature) / areaM2,
+    outside: (from, to) => law.outside?.(from, to) ?? [],
   };
 }

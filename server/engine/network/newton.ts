@@ -9,7 +9,7 @@ const mostHalvings = 10;
 /** Iterations after which temperatures far above the hottest are taken for a runaway. */
 const patience = 5;
 /** In networks of so many unknowns a state on the way to an answer gets no second try. */
-const large = 1000;
+const large = 1500;
 const mostTransientSteps = 400;
 /** Unknowns times steps that the fallback may take. */
 const transientBudget = 3e5;
@@ -19,8 +19,10 @@ const residualTolerance = 1e-11;
 /** Rounding that a residual cannot go below, as a multiple of Σ|conductance| × temperature. */
 const rounding = 8 * Number.EPSILON;
 /** From this many unknowns on, a factorisation that still serves well is used again: while each step is this share of the last, or less. */
-const worthReusing = 200;
+const worthReusing = 600;
 const servesWell = 0.45;
+/** In a large network one made on this very way to the answer is soon worth making again: Newton’s method is near its end then. */
+const servesWellFresh = 0.1;
 
 export interface SteadyState {
   iterations: number;
@@ -192,6 +194,7 @@ function newton(network: PreparedNetwork, { base, step, weight, last }: Workspac
   let lastLargest = Infinity;
   let ratio = 1;
   let lastReused = false;
+  let fresh = false;
   for (let iteration = 1; iteration <= mostIterations; iteration++) {
     for (let i = 0; i < unknownCount; i++) {
       const s = stiffness[i] as number;
@@ -203,10 +206,13 @@ function newton(network: PreparedNetwork, { base, step, weight, last }: Workspac
     const reuse: boolean =
       network.factored &&
       unknownCount >= worthReusing &&
-      (iteration === 1 || ratio < servesWell || (iteration === 2 && lastReused));
+      (iteration === 1 ||
+        ratio < (fresh && unknownCount >= large ? servesWellFresh : servesWell) ||
+        (iteration === 2 && lastReused));
     if (!reuse) {
       network.matrix.factor();
       network.factored = true;
+      fresh = true;
     }
     lastReused = reuse;
     solveForStep(network, step);

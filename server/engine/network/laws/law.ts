@@ -22,14 +22,20 @@ export interface LinkLaw {
   outside?: (from: number, to: number) => string[];
 }
 
+class LinearLaw implements LinkLaw {
+  constructor(readonly conductance: number) {}
+
+  evaluate(from: number, to: number, out: FlowOut): void {
+    out.flow = this.conductance * (from - to);
+    out.byFrom = this.conductance;
+    out.byTo = -this.conductance;
+  }
+
+  guess(): number {
+    return this.conductance;
+  }
+}
+
 export function linear(conductance: number): LinkLaw {
-  return {
-    conductance,
-    evaluate: (from, to, out) => {
-      out.flow = conductance * (from - to);
-      out.byFrom = conductance;
-      out.byTo = -conductance;
-    },
-    guess: () => conductance,
-  };
+  return new LinearLaw(conductance);
 }

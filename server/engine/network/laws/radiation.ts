@@ -1,6 +1,6 @@
 import type { NetworkLink } from '../../../../shared/schemas/network.js';
 import { stefanBoltzmann } from '../../constants.js';
-import type { LinkLaw } from './law.js';
+import type { FlowOut, LinkLaw } from './law.js';
 
 /** Area × effective emissivity of a radiation link [m²]: towards large surroundings, or between two grey surfaces. */
 function radiatingArea(link: Extract<NetworkLink, { kind: 'radiation' }>): number {
@@ -15,19 +15,24 @@ function radiatingArea(link: Extract<NetworkLink, { kind: 'radiation' }>): numbe
 }
 
 /** q = σ A ε (T₁⁴ − T₂⁴). */
+class RadiationLaw implements LinkLaw {
+  constructor(readonly radiatingArea: number) {}
+
+  evaluate(from: number, to: number, out: FlowOut): void {
+    const factor = stefanBoltzmann * this.radiatingArea;
+    const from2 = from * from;
+    const to2 = to * to;
+    // (T₁² + T₂²)(T₁ + T₂)(T₁ − T₂) keeps its digits where both are near.
+    out.flow = factor * (from2 + to2) * (from + to) * (from - to);
+    out.byFrom = 4 * factor * from2 * from;
+    out.byTo = -4 * factor * to2 * to;
+  }
+
+  guess(temperature: number): number {
+    return 4 * stefanBoltzmann * this.radiatingArea * temperature ** 3;
+  }
+}
+
 export function radiationLaw(link: Extract<NetworkLink, { kind: 'radiation' }>): LinkLaw {
-  const area = radiatingArea(link);
-  const factor = stefanBoltzmann * area;
-  return {
-    radiatingArea: area,
-    evaluate: (from, to, out) => {
-      const from2 = from * from;
-      const to2 = to * to;
-      // (T₁² + T₂²)(T₁ + T₂)(T₁ − T₂) keeps its digits where both are near.
-      out.flow = factor * (from2 + to2) * (from + to) * (from - to);
-      out.byFrom = 4 * factor * from2 * from;
-      out.byTo = -4 * factor * to2 * to;
-    },
-    guess: (temperature) => 4 * factor * temperature ** 3,
-  };
+  return new RadiationLaw(radiatingArea(link));
 }
