@@ -216,6 +216,7 @@ export const networkDocumentSchema = z
     grids: z.array(gridSchema).max(200).default([]),
     supplies: z.array(supplySchema).max(1000).default([]),
     limits: z.array(limitSchema).max(10000).default([]),
+    cutOuts: z.array(z.unknown()).max(0, 'Cut-outs are not computed yet: remove them').optional(),
   })
   .meta({ id: 'NetworkDocument' });
 
